@@ -21,7 +21,7 @@ export interface Component {
    * empty for continua.
    */
   readonly group: string;
-  /** On the family's grid, at the line spread the family was prepared for. */
+  /** On the family's component grid, at the line spread the family was prepared for. */
   readonly flux: Float32Array;
   /** First and one-past-last pixel where |flux| > 0: lines are short, loops need not run over zeros. */
   readonly first: number;
@@ -37,6 +37,8 @@ export interface Family {
   readonly name: string;
   readonly kind: Kind;
   readonly grid: LogGrid;
+  /** The finer grid of the components, for the refit on native pixels. */
+  readonly componentGrid: LogGrid;
   /** K rows on `grid`, unit rms; K is 2..10. */
   readonly basis: readonly Float32Array[];
   readonly redshiftMin: number;
