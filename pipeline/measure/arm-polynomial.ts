@@ -28,7 +28,8 @@ export class ArmPolynomial {
    */
   constructor(pixels: RefitPixels, order: number) {
     this.#pixels = pixels;
-    this.#arms = pixels.arms.map(({ first, end }) => {
+    const filled = pixels.arms.filter(({ first, end }) => end > first);
+    this.#arms = filled.map(({ first, end }) => {
       const span = pixels.lnHigh[end - 1]! - pixels.lnLow[first]!;
       const own = Math.min(order, Math.max(1, Math.round((order * span) / FULL_SPAN)));
       return { first, end, order: own, rows: legendreRows(pixels.place, first, end, own) };

@@ -1,5 +1,5 @@
 import type { Kind } from '../../templates/family.ts';
-import type { LineMeasurement } from '../weigh/answer.ts';
+import type { LineMeasurement } from './line-measurement.ts';
 import type { Refit } from './refit.ts';
 import type { RefitPixels } from './refit-pixels.ts';
 import { REST_LINES, type LineNature, type RestLine } from './rest-lines.ts';

@@ -1,6 +1,7 @@
 /**
  * The usable native pixels of one spectrum, laid end to end for the refit. Every array has `count` entries;
- * arm a owns entries arms[a].first .. arms[a].end - 1, in increasing wavelength.
+ * arm a owns entries arms[a].first .. arms[a].end - 1 (none when it has no usable pixel), in increasing
+ * wavelength.
  */
 export interface RefitPixels {
   readonly count: number;
@@ -61,7 +62,7 @@ export function refitPixels(arms: readonly NativeArm[], mismatch: number): Refit
   for (const arm of arms) {
     const first = next;
     next = layArm(arm, mismatch, pixels, first);
-    if (next > first) pixels.arms.push({ first, end: next });
+    pixels.arms.push({ first, end: next });
   }
   return pixels;
 }

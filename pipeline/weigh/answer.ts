@@ -1,4 +1,7 @@
 import type { Kind } from '../../templates/family.ts';
+import type { LineMeasurement } from '../measure/index.ts';
+
+export type { LineMeasurement } from '../measure/index.ts';
 
 /** Why a fit is flagged. `blocks` and `look` ask for a person, `note` does not. */
 export type ReasonWord =
@@ -29,20 +32,6 @@ export interface Reason {
   /** One plain sentence with its numbers. */
   readonly sentence: string;
   readonly numbers: Readonly<Record<string, number>>;
-}
-
-/** One emission or absorption line measured at a fitted redshift. */
-export interface LineMeasurement {
-  /** Ion and rounded wavelength in common notation, e.g. `[O III] 5008`. */
-  readonly name: string;
-  readonly wavelengthRestVacuumAngstrom: number;
-  readonly wavelengthObservedAngstrom: number;
-  /** Flux in input unit × ångström; negative = absorption. */
-  readonly flux: number;
-  readonly fluxError: number;
-  /** Rest-frame equivalent width, ångström, positive in emission; null where the continuum is not above noise. */
-  readonly equivalentWidthAngstrom: number | null;
-  readonly signalToNoise: number;
 }
 
 /** One redshift hypothesis after the refit. */

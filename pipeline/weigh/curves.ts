@@ -1,0 +1,55 @@
+import type { Arm } from '../decode/index.ts';
+import type { Refit, RefitPixels } from '../measure/index.ts';
+import type { CurveArm, Curves } from './answer.ts';
+
+/**
+ * What a page draws of one spectrum: data, errors, best model and runner-up on the native pixels.
+ *
+ * @param arms the arms that gave `pixels` its ranges, in the same order
+ * @param errors 1-sigma per native pixel of each arm, after the noise check; 0 = unknown
+ */
+export function curvesOf(
+  arms: readonly Arm[],
+  errors: readonly Float64Array[],
+  pixels: RefitPixels,
+  best: Refit | null,
+  runnerUp: Refit | null,
+  scan: Curves['scan'],
+): Curves {
+  return {
+    arms: arms.map((arm, a) => curveArm(arm, errors[a]!, pixels, a, best, runnerUp)),
+    scan,
+  };
+}
+
+function curveArm(
+  arm: Arm,
+  error: Float64Array,
+  pixels: RefitPixels,
+  armIndex: number,
+  best: Refit | null,
+  runnerUp: Refit | null,
+): CurveArm {
+  const n = arm.flux.length;
+  const used = new Uint8Array(n);
+  const model = new Float32Array(n).fill(NaN);
+  const runnerUpModel = runnerUp ? new Float32Array(n).fill(NaN) : new Float32Array(0);
+  const range = pixels.arms[armIndex];
+  if (range) {
+    for (let k = range.first; k < range.end; k++) {
+      const i = pixels.nativeIndex[k]!;
+      used[i] = 1;
+      if (best) model[i] = best.model[k]! * pixels.fluxScale;
+      if (runnerUp) runnerUpModel[i] = runnerUp.model[k]! * pixels.fluxScale;
+    }
+  }
+  return {
+    name: arm.name,
+    wavelengthVacuumAngstrom: Float32Array.from(arm.wavelengthVacuumAngstrom),
+    flux: Float32Array.from(arm.flux),
+    error: Float32Array.from(error),
+    used,
+    model,
+    runnerUpModel,
+  };
+}
