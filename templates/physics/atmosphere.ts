@@ -1,0 +1,111 @@
+import { blanketingFactor } from './blanketing.ts';
+import type { Composition } from './composition.ts';
+import { prepareContinuum } from './continuum.ts';
+import type { ContinuumSource } from './continuum.ts';
+import { solveGas } from './gas.ts';
+import type { GasTables } from './gas.ts';
+import { hydrostaticPressure } from './hydrostatic.ts';
+import type { AtomicEdge } from './photo-ionisation.ts';
+import { rosselandMean } from './rosseland.ts';
+import { temperatureAt } from './temperature-structure.ts';
+
+/** Tables of the atmosphere: the gas and its photo-ionisation levels. */
+export interface AtmosphereTables extends GasTables {
+  readonly atomicEdges: readonly AtomicEdge[];
+}
+
+/** What an atmosphere is asked for. */
+export interface AtmosphereRequest {
+  /** Effective temperature, kelvin. */
+  readonly effectiveTemperature: number;
+  /** log10 of the surface gravity in cm s^-2. */
+  readonly logGravity: number;
+  /** dex; enters the blanketing only, the composition holds the abundances. */
+  readonly metallicity: number;
+  readonly composition: Composition;
+  /** Number of depths, at least 8. */
+  readonly depths: number;
+}
+
+/** Plane-parallel atmosphere in hydrostatic equilibrium. */
+export interface Atmosphere {
+  /** Rosseland optical depths, ascending. */
+  readonly tau: Float64Array;
+  /** Rosseland mean opacity with blanketing, cm^-1, per depth. */
+  readonly meanOpacity: Float64Array;
+  /** Gas and continuous opacity at the depths. */
+  readonly continuum: ContinuumSource;
+}
+
+const LOG_TAU_TOP = -5;
+const LOG_TAU_BOTTOM = 2;
+/** Pressures (log10 dyn cm^-2) of the opacity table that the integration interpolates. */
+const LOG_PRESSURES = Float64Array.from({ length: 26 }, (_, i) => -3 + 0.5 * i);
+/** Stars cooler than this are convective below the photosphere, where tau exceeds the second value. */
+const CONVECTIVE_BELOW_K = 9000;
+const CONVECTIVE_TAU = 0.7;
+/**
+ * Greatest d ln T / d ln P: convection near the surface carries little and lets the gradient rise above the
+ * adiabatic one; deeper it approaches it. Choices in the range of mixing-length models.
+ */
+const SHALLOW_GRADIENT = 0.5;
+const DEEP_GRADIENT = 0.28;
+const DEEP_TAU = 4;
+
+/** ln of the blanketed Rosseland mass opacity per depth on LOG_PRESSURES. */
+function opacityTable(
+  temperature: Float64Array,
+  request: AtmosphereRequest,
+  tables: AtmosphereTables,
+): Float64Array[] {
+  const columns = LOG_PRESSURES.length;
+  const temperatures = new Float64Array(temperature.length * columns);
+  const pressures = new Float64Array(temperatures.length);
+  for (let cell = 0; cell < temperatures.length; cell += 1) {
+    temperatures[cell] = temperature[Math.floor(cell / columns)]!;
+    pressures[cell] = 10 ** LOG_PRESSURES[cell % columns]!;
+  }
+  const gas = solveGas(temperatures, pressures, request.composition, tables);
+  const mean = rosselandMean(prepareContinuum(gas, request.composition, tables, tables.atomicEdges));
+  const ln = mean.map((opacity, cell) =>
+    Math.log((opacity * blanketingFactor(temperatures[cell]!, request.metallicity)) / gas.massDensity[cell]!),
+  );
+  return Array.from(temperature, (_, depth) => ln.subarray(depth * columns, (depth + 1) * columns));
+}
+
+/** Lowers temperatures whose gradient convection would not allow; going inwards, in place. */
+function limitGradient(tau: Float64Array, temperature: Float64Array, pressure: Float64Array): void {
+  for (let depth = 1; depth < tau.length; depth += 1) {
+    if (tau[depth]! <= CONVECTIVE_TAU) {
+      continue;
+    }
+    const gradient = tau[depth]! > DEEP_TAU ? DEEP_GRADIENT : SHALLOW_GRADIENT;
+    const limit = temperature[depth - 1]! * (pressure[depth]! / pressure[depth - 1]!) ** gradient;
+    temperature[depth] = Math.min(temperature[depth]!, limit);
+  }
+}
+
+/**
+ * Builds the atmosphere of a star: a temperature law in optical depth, hydrostatic pressure, and for cool
+ * stars one correction of the gradient for convection. Costs a tenth of a second.
+ */
+export function buildAtmosphere(request: AtmosphereRequest, tables: AtmosphereTables): Atmosphere {
+  const { depths } = request;
+  const gravity = 10 ** request.logGravity;
+  const tau = Float64Array.from(
+    { length: depths },
+    (_, i) => 10 ** (LOG_TAU_TOP + ((LOG_TAU_BOTTOM - LOG_TAU_TOP) * i) / (depths - 1)),
+  );
+  const temperature = tau.map((depth) => temperatureAt(request.effectiveTemperature, depth));
+  let pressure = hydrostaticPressure(tau, gravity, LOG_PRESSURES, opacityTable(temperature, request, tables));
+  if (request.effectiveTemperature < CONVECTIVE_BELOW_K) {
+    limitGradient(tau, temperature, pressure);
+    pressure = hydrostaticPressure(tau, gravity, LOG_PRESSURES, opacityTable(temperature, request, tables));
+  }
+  const gas = solveGas(temperature, pressure, request.composition, tables);
+  const continuum = prepareContinuum(gas, request.composition, tables, tables.atomicEdges);
+  const meanOpacity = rosselandMean(continuum).map(
+    (opacity, depth) => opacity * blanketingFactor(temperature[depth]!, request.metallicity),
+  );
+  return { tau, meanOpacity, continuum };
+}
