@@ -41,6 +41,8 @@ export interface ImageHdu extends HduBase {
   readonly type: 'image';
   readonly bitpix: number;
   readonly axes: readonly number[];
+  /** Rows of axes[0] pixels: the product of axes 2..n; 1 for a one-dimensional image, 0 without data. */
+  readonly rowCount: number;
   /**
    * Rows `first .. first+count-1` of the image flattened to (product of axes 2..n) rows of axes[0] pixels,
    * as physical values (BSCALE, BZERO applied; BLANK and NaN become NaN). Reads only those bytes.
@@ -80,4 +82,6 @@ export interface FitsFile {
   readonly hdus: readonly Hdu[];
   /** Set when the walk had to stop before the end of the file (HDUs before it are usable). */
   readonly fault: Error | null;
+  /** Bytes after the last HDU that begin no further HDU: padding, or junk that is passed over. */
+  readonly trailingBytes: number;
 }
