@@ -6,7 +6,6 @@ import type { OptionDescription } from './option.ts';
  */
 export interface MeasuringOptions {
   readonly gridStepLn: number;
-  readonly redshiftMaxGalaxy: number;
   readonly reviewConfidence: number;
   readonly defaultLineSpreadKmS: number;
   readonly resolvingPower: number | null;
@@ -25,12 +24,6 @@ export const MEASURING_OPTIONS: {
     range: [2e-5, 2e-3],
     default: Math.LN10 * 1e-4,
     why: 'step of the search grid; 0.0001 in log10 is 69 km/s, the pixel of a spectrograph of R about 2000, so the grid neither loses detail nor repeats it',
-  },
-  redshiftMaxGalaxy: {
-    unit: '',
-    range: [0.05, 3],
-    default: 1.7,
-    why: 'end of the galaxy search; at 1.7 the oxygen pair at 3728 ångström leaves a detector that ends at 10,000 ångström and nothing is left to find',
   },
   reviewConfidence: {
     unit: 'probability',

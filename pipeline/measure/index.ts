@@ -1,5 +1,6 @@
 /** measure: candidates → measurements, on the native pixels. */
 export { barycentricVelocityKmS } from './barycentric.ts';
+export { type BarycentricFrame, barycentricFrame } from './barycentric-frame.ts';
 export type { LineMeasurement } from './line-measurement.ts';
 export { measureLines } from './lines.ts';
 export { DEFAULT_ECONOMY, type Economy, measureCandidates, type Proposal } from './measure-candidates.ts';

@@ -1,30 +1,30 @@
 import type { Arm } from '../decode/index.ts';
+import type { GridArm } from '../grid/index.ts';
 import type { Refit, RefitPixels } from '../measure/index.ts';
 import type { CurveArm, Curves } from './answer.ts';
 
 /**
  * What a page draws of one spectrum: data, errors, best model and runner-up on the native pixels.
  *
- * @param arms the arms that gave `pixels` its ranges, in the same order
- * @param errors 1-sigma per native pixel of each arm, after the noise check; 0 = unknown
+ * @param arms as read
+ * @param gridArms the arms that gave `pixels` its ranges, in the same order
  */
 export function curvesOf(
   arms: readonly Arm[],
-  errors: readonly Float64Array[],
+  gridArms: readonly GridArm[],
   pixels: RefitPixels,
   best: Refit | null,
   runnerUp: Refit | null,
   scan: Curves['scan'],
 ): Curves {
   return {
-    arms: arms.map((arm, a) => curveArm(arm, errors[a]!, pixels, a, best, runnerUp)),
+    arms: gridArms.map(({ armIndex }, a) => curveArm(arms[armIndex]!, pixels, a, best, runnerUp)),
     scan,
   };
 }
 
 function curveArm(
   arm: Arm,
-  error: Float64Array,
   pixels: RefitPixels,
   armIndex: number,
   best: Refit | null,
@@ -47,7 +47,7 @@ function curveArm(
     name: arm.name,
     wavelengthVacuumAngstrom: Float32Array.from(arm.wavelengthVacuumAngstrom),
     flux: Float32Array.from(arm.flux),
-    error: Float32Array.from(error),
+    error: Float32Array.from(arm.inverseVariance, (w) => (w > 0 ? 1 / Math.sqrt(w) : 0)),
     used,
     model,
     runnerUpModel,

@@ -84,8 +84,10 @@ export function separationKmS(z1: number, z2: number): number {
   return (SPEED_OF_LIGHT_KM_S * Math.abs(z1 - z2)) / (1 + z1);
 }
 
-/** Effective variance over stated variance from the noise check. */
-export function noiseInflation(factor: number, correlation: readonly number[]): number {
-  const sum = correlation.reduce((s, rho) => s + rho, 0);
-  return Math.max(1, factor * factor * (1 + 2 * sum));
+/**
+ * Effective variance over the variance of one pixel: 1 + 2 Σ correlation over the lags given, at least 1. A
+ * smooth model averages neighbouring pixels, whose noise does not average out.
+ */
+export function noiseInflation(correlation: readonly number[]): number {
+  return Math.max(1, 1 + 2 * correlation.reduce((sum, rho) => sum + rho, 0));
 }

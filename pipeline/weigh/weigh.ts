@@ -1,17 +1,10 @@
 import type { Kind } from '../../templates/family.ts';
 import type { Frame } from '../decode/index.ts';
-import type { LineMeasurement, MeasuredSpectrum, Measurement } from '../measure/index.ts';
+import type { LineMeasurement, MeasuredSpectrum, Measurement, Refit } from '../measure/index.ts';
 import type { Answer, BarycentricSource, CandidateSummary } from './answer.ts';
 import { type Calibration, calibrated } from './calibration.ts';
 import type { Case, SecondOpinion } from './case.ts';
-import {
-  FLAT_PRIOR,
-  type Hypothesis,
-  type KindPrior,
-  noiseInflation,
-  type Posterior,
-  posterior,
-} from './evidence.ts';
+import { FLAT_PRIOR, type Hypothesis, type KindPrior, type Posterior, posterior } from './evidence.ts';
 import { featuresOf } from './features.ts';
 import { emissionLines } from './reasons/emission.ts';
 import { reasonsFor } from './reasons/index.ts';
@@ -30,6 +23,8 @@ export const ERROR_FLOOR_KM_S: Readonly<Record<Kind, number>> = { star: 7, galax
 /** What the stages before hand to the weighing. */
 export interface Weighing {
   readonly measured: MeasuredSpectrum;
+  /** Effective variance over the variance behind the weights, >= 1. */
+  readonly inflation: number;
   readonly prior: KindPrior;
   readonly calibration: Calibration;
   readonly reviewConfidence: number;
@@ -49,12 +44,19 @@ export interface Weighing {
   readonly barycentricSource: BarycentricSource;
 }
 
+/** The answer, and the two refits a page draws. */
+export interface Weighed {
+  readonly answer: Answer;
+  readonly best: Refit | null;
+  readonly runnerUp: Refit | null;
+}
+
 /** Evidence → probability → reasons: what the program concludes about one spectrum. */
-export function weigh(input: Weighing): Answer {
-  const inflation = noiseInflation(input.noiseFactor, input.noiseCorrelation);
+export function weigh(input: Weighing): Weighed {
+  const { inflation } = input;
   const withPrior = posterior(input.measured, inflation, input.prior);
   const [best, runnerUp] = withPrior.hypotheses;
-  if (!best) return nothingFitted(input);
+  if (!best) return { answer: nothingFitted(input), best: null, runnerUp: null };
   const one = caseOf(input, withPrior, best, runnerUp ?? null, inflation);
   const features = featuresOf(one);
   const flat = flatMargin(input, best, inflation);
@@ -68,7 +70,7 @@ export function weigh(input: Weighing): Answer {
   const redshift = barycentric(best.best.redshift, input);
   const errorKmS = totalErrorKmS(best.best, inflation);
   const isStar = kind === 'star';
-  return {
+  const answer: Answer = {
     kind,
     family: best.best.family.name,
     redshift,
@@ -103,6 +105,7 @@ export function weigh(input: Weighing): Answer {
     lines: one.lines,
     features,
   };
+  return { answer, best: best.best.refit, runnerUp: runnerUp?.best.refit ?? null };
 }
 
 function caseOf(
