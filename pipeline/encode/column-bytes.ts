@@ -9,14 +9,15 @@ export interface EncodedColumn {
   readonly width: number;
   /** TNULL; absent when the column has no missing integers. */
   readonly missing?: number | bigint;
-  /** Writes the cell of `row` at byte `offset` of the table. */
-  readonly put: (table: DataView, offset: number, row: number) => void;
+  /** Writes all cells: the first at byte `start` of the table, each next one `rowBytes` on. */
+  readonly put: (table: DataView, start: number, rowBytes: number) => void;
 }
 
 const LOWEST_INT32 = -(2 ** 31);
 const LOWEST_INT64 = -(2n ** 63n);
 const TRUE = 0x54;
 const FALSE = 0x46;
+const BLANK = 0x20;
 
 /**
  * Plans the cells of a column.
@@ -34,9 +35,10 @@ export function encodeColumn(column: ColumnSpec, rowCount: number): EncodedColum
       return {
         form: 'L',
         width: 1,
-        put: (table, offset, row) => {
-          const value = column.values[row] ?? null;
-          table.setUint8(offset, value === null ? 0 : value ? TRUE : FALSE);
+        put: (table, start, rowBytes) => {
+          for (const [row, value] of column.values.entries()) {
+            table.setUint8(start + row * rowBytes, value === null ? 0 : value ? TRUE : FALSE);
+          }
         },
       };
     case 'int32':
@@ -64,8 +66,10 @@ function encodeInt32(name: string, values: ValuesOf<'int32'>, missing = LOWEST_I
     form: 'J',
     width: 4,
     ...(anyMissing ? { missing } : {}),
-    put: (table, offset, row) => {
-      table.setInt32(offset, values[row] ?? missing);
+    put: (table, start, rowBytes) => {
+      for (let row = 0; row < values.length; row++) {
+        table.setInt32(start + row * rowBytes, values[row] ?? missing);
+      }
     },
   };
 }
@@ -83,8 +87,10 @@ function encodeInt64(name: string, values: ValuesOf<'int64'>, missing = LOWEST_I
     form: 'K',
     width: 8,
     ...(anyMissing ? { missing } : {}),
-    put: (table, offset, row) => {
-      table.setBigInt64(offset, values[row] ?? missing);
+    put: (table, start, rowBytes) => {
+      for (let row = 0; row < values.length; row++) {
+        table.setBigInt64(start + row * rowBytes, values[row] ?? missing);
+      }
     },
   };
 }
@@ -106,11 +112,13 @@ function encodeFloats(
   return {
     form: perRow === 1 ? letter : `${perRow}${letter}`,
     width: size * perRow,
-    put: (table, offset, row) => {
-      for (let i = 0; i < perRow; i++) {
-        const value = values[row * perRow + i] ?? NaN;
-        if (size === 4) table.setFloat32(offset + 4 * i, value);
-        else table.setFloat64(offset + 8 * i, value);
+    put: (table, start, rowBytes) => {
+      for (let next = 0, cell = start; next < values.length; cell += rowBytes) {
+        for (let i = 0; i < perRow; i++) {
+          const value = values[next++] ?? NaN;
+          if (size === 4) table.setFloat32(cell + 4 * i, value);
+          else table.setFloat64(cell + 8 * i, value);
+        }
       }
     },
   };
@@ -130,9 +138,13 @@ function encodeStrings(name: string, values: ValuesOf<'string'>, length: number 
   return {
     form: `${width}A`,
     width,
-    put: (table, offset, row) => {
-      const bytes = new Uint8Array(table.buffer, table.byteOffset + offset, width);
-      putAscii(bytes, 0, (values[row] ?? '').padEnd(width));
+    put: (table, start, rowBytes) => {
+      const bytes = new Uint8Array(table.buffer, table.byteOffset, table.byteLength);
+      for (const [row, value] of values.entries()) {
+        const cell = start + row * rowBytes;
+        bytes.fill(BLANK, cell, cell + width);
+        putAscii(bytes, cell, value ?? '');
+      }
     },
   };
 }

@@ -22,7 +22,7 @@ export function tableParts(table: TableSpec): HduParts {
   const view = new DataView(data.buffer);
   let start = 0;
   for (const column of encoded) {
-    for (let row = 0; row < table.rowCount; row++) column.put(view, row * rowBytes + start, row);
+    column.put(view, start, rowBytes);
     start += column.width;
   }
   const structure: CardSpec[] = [
