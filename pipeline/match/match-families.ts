@@ -1,5 +1,11 @@
 import type { Family } from '../../templates/family.ts';
 import type { Grid } from '../grid/grid.ts';
+import {
+  type CorrelationCurve,
+  type CorrelationPeak,
+  correlationSearch,
+  highestPeaks,
+} from './correlation-search.ts';
 import { transformVectors } from './data-transforms.ts';
 import { type LagLayout, lagsFor, layOutLags, lnOnePlusRedshift } from './lag-layout.ts';
 import { DEFAULT_MATCH_OPTIONS, type MatchOptions } from './match-options.ts';
@@ -8,6 +14,11 @@ import { type DataTransforms, scanFamily } from './scan-family.ts';
 import { prepareSearch, type SearchData } from './search-data.ts';
 import { createMatchWorkspace, type MatchWorkspace } from './workspace.ts';
 
+/** Correlation peaks below this r are noise more often than not (Kurtz & Mink 1998, section 5). */
+const LEAST_R = 3;
+/** Candidates of one refit set closer than this are refined to the same place. */
+const TWIN_STEPS = 1.5;
+
 /** What the search found for one family. */
 export interface FamilyMatch extends RedshiftCurve {
   readonly family: Family;
@@ -15,13 +26,17 @@ export interface FamilyMatch extends RedshiftCurve {
   readonly covered: Float64Array;
   /** Deepest first. */
   readonly minima: readonly Minimum[];
+  /** Cross-correlation with the family's leading spectrum and, where it has lines, with those. */
+  readonly correlations: readonly CorrelationCurve[];
+  /** Highest first, of all correlations. */
+  readonly peaks: readonly CorrelationPeak[];
 }
 
 /** One redshift hypothesis for the refit. */
 export interface Candidate {
   readonly family: Family;
   readonly redshift: number;
-  /** Of the free linear fit on the grid, all pixels; NaN for a peak of the correlation alone. */
+  /** Of the free linear fit on the grid, all pixels. */
   readonly chiSquare: number;
   readonly atEdge: boolean;
   /** Part of the weight the family covers there. */
@@ -56,7 +71,16 @@ export function matchFamilies(
 ): Match {
   const data = prepareSearch(grid, options);
   const transformsOf = transformsByLayout(data);
-  const matches = families.map((family) => matchFamily(grid, family, data, transformsOf, options, workspace));
+  const correlate = correlationSearch(grid, options, workspace);
+  const matches = families.map((family): FamilyMatch => {
+    const scan = matchFamily(grid, family, data, transformsOf, options, workspace);
+    const correlations = correlate(family);
+    const separation = options.separationKmS[family.kind];
+    const peaks = correlations
+      .flatMap((curve) => highestPeaks(curve, options.correlationPeaks, separation))
+      .sort((a, b) => b.height - a.height);
+    return { ...scan, correlations, peaks };
+  });
   return {
     families: matches,
     candidates: candidatesOf(matches, grid.step),
@@ -93,7 +117,7 @@ function matchFamily(
   transformsOf: (layout: LagLayout) => DataTransforms,
   options: MatchOptions,
   workspace: MatchWorkspace,
-): FamilyMatch {
+): Omit<FamilyMatch, 'correlations' | 'peaks'> {
   if (Math.abs(family.grid.step / grid.step - 1) > 1e-9) {
     throw new RangeError(`matchFamilies() family step must be ${grid.step}, got ${family.grid.step}`);
   }
@@ -124,29 +148,44 @@ function matchFamily(
   };
 }
 
-/** All minima in one list, each redshift of a refit set once: families of a set share their components. */
+/**
+ * All minima and the clear correlation peaks in one list, each redshift of a refit set once: families of a set
+ * share their components.
+ */
 function candidatesOf(matches: readonly FamilyMatch[], step: number): Candidate[] {
-  const all = matches.flatMap(({ family, minima, covered }) =>
-    minima.map(
-      (minimum): Candidate => ({
-        family,
-        redshift: minimum.redshift,
-        chiSquare: minimum.chiSquare,
-        atEdge: minimum.atEdge,
-        covered: covered[minimum.index]!,
-        from: 'chi-square',
-      }),
-    ),
-  );
+  const all = matches.flatMap((match) => [
+    ...match.minima.map((minimum) => candidateAt(match, minimum.redshift, 'chi-square', minimum)),
+    ...match.peaks
+      .filter((peak) => peak.r >= LEAST_R)
+      .map((peak) => candidateAt(match, peak.redshift, 'correlation')),
+  ]);
   all.sort((a, b) => a.chiSquare - b.chiSquare);
   const kept: Candidate[] = [];
   for (const candidate of all) {
     const twin = kept.some(
       (other) =>
         other.family.refitSet === candidate.family.refitSet &&
-        Math.abs(Math.log1p(other.redshift) - Math.log1p(candidate.redshift)) < step,
+        Math.abs(Math.log1p(other.redshift) - Math.log1p(candidate.redshift)) < TWIN_STEPS * step,
     );
     if (!twin) kept.push(candidate);
   }
   return kept;
+}
+
+function candidateAt(
+  { family, lnStart, step, chiSquare, covered }: FamilyMatch,
+  redshift: number,
+  from: Candidate['from'],
+  minimum?: Minimum,
+): Candidate {
+  const place = Math.round((Math.log1p(redshift) - lnStart) / step);
+  const index = minimum?.index ?? Math.min(Math.max(place, 0), chiSquare.length - 1);
+  return {
+    family,
+    redshift,
+    chiSquare: minimum?.chiSquare ?? chiSquare[index]!,
+    atEdge: minimum?.atEdge ?? false,
+    covered: covered[index]!,
+    from,
+  };
 }
