@@ -1,5 +1,6 @@
 import type { Arm } from '../decode/index.ts';
 import type { GridArm } from '../grid/index.ts';
+import type { KindCurve } from '../match/index.ts';
 import type { Refit, RefitPixels } from '../measure/index.ts';
 import type { CurveArm, Curves } from './answer.ts';
 
@@ -15,11 +16,15 @@ export function curvesOf(
   pixels: RefitPixels,
   best: Refit | null,
   runnerUp: Refit | null,
-  scan: Curves['scan'],
+  scan: readonly KindCurve[],
 ): Curves {
   return {
     arms: gridArms.map(({ armIndex }, a) => curveArm(arms[armIndex]!, pixels, a, best, runnerUp)),
-    scan,
+    scan: scan.map(({ kind, redshift, chiSquare }) => ({
+      kind,
+      redshift: Float32Array.from(redshift),
+      chiSquare: Float32Array.from(chiSquare),
+    })),
   };
 }
 

@@ -15,4 +15,5 @@ export { type Calibration, calibrated } from './calibration.ts';
 export type { Case, SecondOpinion } from './case.ts';
 export { noiseInflation, SAME_REDSHIFT_KM_S } from './evidence.ts';
 export { curvesOf } from './curves.ts';
+export { secondOpinion } from './second-opinion.ts';
 export { weigh, type Weighed, type Weighing } from './weigh.ts';
