@@ -1,0 +1,48 @@
+/** Madau 1995 (ApJ 441, 18), eq 15: wavelength (Å) and strength of the lines of the Lyman forest. */
+const FOREST: readonly { readonly wavelength: number; readonly strength: number }[] = [
+  { wavelength: 1215.67, strength: 0.0036 },
+  { wavelength: 1025.72, strength: 0.0017 },
+  { wavelength: 972.537, strength: 0.0011846 },
+  { wavelength: 949.743, strength: 0.000941 },
+];
+
+/** Exponent of the growth of the forest with 1+z (Madau 1995, eq 15). */
+const FOREST_GROWTH = 3.46;
+
+/** The Lyman limit, ångström. */
+const LYMAN_LIMIT = 911.75;
+
+/** Optical depth of photoelectric absorption: the approximation of Madau 1995, footnote 3 (from memory). */
+function photoelectricDepth(onePlusObserved: number, onePlusEmitted: number): number {
+  const c = onePlusObserved;
+  const e = onePlusEmitted;
+  return (
+    0.25 * c ** 3 * (e ** 0.46 - c ** 0.46) +
+    9.4 * c ** 1.5 * (e ** 0.18 - c ** 0.18) -
+    0.7 * c ** 3 * (c ** -1.32 - e ** -1.32) -
+    0.023 * (e ** 1.68 - c ** 1.68)
+  );
+}
+
+/**
+ * Mean transmission of the intergalactic hydrogen in front of a source (Madau 1995, ApJ 441, 18).
+ * A mean: one sight line scatters around it by tens of per cent. Metal lines are left out.
+ *
+ * @param restAngstrom wavelength in the rest frame of the source, > 0
+ * @param redshift of the source, ≥ 0; published for 0 to 5, an extrapolation beyond
+ * @returns 0 to 1; 1 redward of Lyman α
+ */
+export function intergalacticTransmission(restAngstrom: number, redshift: number): number {
+  const observed = restAngstrom * (1 + redshift);
+  let depth = 0;
+  for (const { wavelength, strength } of FOREST) {
+    // Absorbers lie between us and the source: nothing absorbs a line redward of its own rest wavelength.
+    if (restAngstrom < wavelength && observed > wavelength) {
+      depth += strength * (observed / wavelength) ** FOREST_GROWTH;
+    }
+  }
+  if (restAngstrom < LYMAN_LIMIT && observed > LYMAN_LIMIT) {
+    depth += photoelectricDepth(observed / LYMAN_LIMIT, 1 + redshift);
+  }
+  return Math.exp(-Math.max(0, depth));
+}

@@ -1,0 +1,47 @@
+/**
+ * Rest wavelengths of emission lines, vacuum ångström. Hydrogen: centroids of the Dirac fine structure with
+ * Lamb shifts. Others: NIST Atomic Spectra Database and Morton 2003 (ApJS 149, 205) through the compilation
+ * the tests compare with. A name is element, charge stage as in the spectroscopic numeral, then the rounded
+ * air wavelength observers call the line by.
+ */
+export const REST_WAVELENGTHS = {
+  hydrogenLymanAlpha: 1215.67,
+  heliumII1640: 1640.42,
+  oxygenIII1661: 1660.809,
+  oxygenIII1666: 1666.15,
+  carbonIII1907: 1906.683,
+  carbonIII1909: 1908.734,
+  neonV3346: 3346.7826,
+  neonV3426: 3426.8635,
+  oxygenII3726: 3727.0919,
+  oxygenII3729: 3729.875,
+  hydrogen12: 3751.2175,
+  hydrogen11: 3771.7012,
+  hydrogen10: 3798.9757,
+  hydrogen9: 3836.4719,
+  neonIII3869: 3869.8612,
+  hydrogen8: 3890.1507,
+  neonIII3968: 3968.5935,
+  hydrogenEpsilon: 3971.1951,
+  hydrogenDelta: 4102.8922,
+  hydrogenGamma: 4341.6837,
+  oxygenIII4363: 4364.4356,
+  heliumI4471: 4472.7338,
+  heliumII4686: 4687.0115,
+  hydrogenBeta: 4862.6829,
+  oxygenIII4959: 4960.2948,
+  oxygenIII5007: 5008.2396,
+  heliumI5876: 5877.2496,
+  oxygenI6300: 6302.0462,
+  oxygenI6364: 6365.5357,
+  nitrogenII6548: 6549.859,
+  hydrogenAlpha: 6564.6081,
+  nitrogenII6583: 6585.2685,
+  heliumI6678: 6679.995,
+  sulphurII6716: 6718.2945,
+  sulphurII6731: 6732.6738,
+  heliumI7065: 7067.1382,
+  argonIII7136: 7137.7572,
+  sulphurIII9069: 9071.1093,
+  sulphurIII9531: 9533.2338,
+} as const;
