@@ -1,0 +1,12 @@
+export { bytesInMemory } from './byte-source.ts';
+export type { ByteSource } from './byte-source.ts';
+export { DEFAULT_READ_LIMITS } from './fits/index.ts';
+export type { FitsFile, ReadLimits } from './fits/index.ts';
+export type { ArmLayout, ArraySource, ExposureTable, Layout, TargetColumns } from './layout.ts';
+export { SPEED_OF_LIGHT_KM_S } from './light.ts';
+export { openInput } from './open-input.ts';
+export type { OpenedInput } from './open-input.ts';
+export { FEWEST_USABLE_PIXELS, readSpectra } from './read-spectra.ts';
+export { recogniseLayout } from './recognise-layout.ts';
+export type { Arm, Frame, NoiseSource, Role, Site, Spectrum } from './spectrum.ts';
+export { airToVacuum, vacuumToAir } from './wavelength/air-vacuum.ts';
