@@ -1,7 +1,10 @@
 import { mkdir } from 'node:fs/promises';
 import { join } from 'node:path';
-import type { NightReader } from '../store/night-reader.ts';
+import { asciiText } from '../pipeline/encode/index.ts';
+import type { CardSpec } from '../pipeline/encode/index.ts';
+import type { NightFacts, NightReader } from '../store/night-reader.ts';
 import { catalogueCsv } from './catalogue/csv.ts';
+import { catalogueFits } from './catalogue/fits.ts';
 import { catalogueParquet } from './catalogue/parquet.ts';
 import { inCatalogueOrder } from './catalogue/row-order.ts';
 import { catalogueVotable } from './catalogue/votable.ts';
@@ -32,6 +35,7 @@ export async function writeNightOutputs(
   // One at a time, made just before it is written: only one format of a big night is in memory at once.
   const outputs: readonly (readonly [string, () => string | Uint8Array | Promise<string>])[] = [
     ['catalogue.csv', () => catalogueCsv(rows)],
+    ['catalogue.fits', () => catalogueFits(rows, fitsCards(facts))],
     ['catalogue.parquet', () => catalogueParquet(rows, named)],
     ['catalogue.vot', () => catalogueVotable(rows, facts.name, named)],
     ['run.json', () => runRecord(facts, rows)],
@@ -44,4 +48,13 @@ export async function writeNightOutputs(
     files.push(path);
   }
   return { files };
+}
+
+function fitsCards(facts: NightFacts): readonly CardSpec[] {
+  return [
+    { keyword: 'ORIGIN', value: 'shiftwork', comment: 'program that wrote the file' },
+    { keyword: 'NIGHT', value: asciiText(facts.name), comment: 'name of the night' },
+    { keyword: 'RECIPE', value: facts.recipeHash, comment: 'SHA-256 of the recipe' },
+    { keyword: 'RUNID', value: facts.runId === null ? null : asciiText(facts.runId), comment: 'run' },
+  ];
 }

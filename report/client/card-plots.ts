@@ -44,16 +44,24 @@ function drawAll(plots: HTMLElement, spectrum: Unpacked, name: string): { destro
   tools.className = 'plot-tools';
   const main = picture(`Spectrum of ${name}: data with error band, best model, residuals below.`);
   const scan = picture(`Chi-square against redshift of ${name}, candidates numbered.`);
-  plots.append(tools, main, scan);
+  const scanTools = document.createElement('div');
+  scanTools.className = 'plot-tools';
+  plots.append(tools, main, scanTools, scan);
   const drawn: Drawn = drawSpectrum(main, spectrum, colours);
   const scanPlot = spectrum.scan.length > 0 ? drawScan(scan, spectrum, colours) : null;
   const hasRunnerUp = spectrum.arms.some((arm) => arm.runnerUp !== null);
-  tools.append(key('key-data', 'data ± error'), key('key-best', 'best model'));
+  tools.append(key('key-data', 'data'), key('key-best', 'best model'), key('key-band', '± error'));
   if (hasRunnerUp) tools.append(toggle('runner-up', 'key-runner-up', false, (on) => drawn.showRunnerUp(on)));
   tools.append(
     toggle('lines', 'key-lines', true, (on) => drawn.showMarks(on)),
     key('key-mask', 'not used'),
   );
+  scanTools.append(
+    'Search, by kind:',
+    ...spectrum.scan.map(({ kind }) => key(`key-${kind}`, kind)),
+    'numbers: candidates',
+  );
+  if (scanPlot === null) scanTools.replaceChildren();
   const hint = document.createElement('span');
   hint.className = 'hint';
   hint.textContent = 'drag to zoom, double-click to go back';

@@ -61,6 +61,11 @@ export function drawMarks(
       ctx.translate(x + 4 * scale, of === 'best' ? to + 3 * scale : from - 3 * scale);
       ctx.rotate(-Math.PI / 2);
       ctx.textAlign = of === 'best' ? 'right' : 'left';
+      // A halo in the colour of the card keeps the label readable over data.
+      ctx.setLineDash([]);
+      ctx.lineWidth = 3 * scale;
+      ctx.strokeStyle = colours.card;
+      ctx.strokeText(mark.label, 0, 0);
       ctx.fillText(mark.label, 0, 0);
       ctx.restore();
     }

@@ -1,6 +1,7 @@
 /** Colours of the drawing, taken from the style sheet so that light, dark and paper stay in one place. */
 export interface Palette {
   readonly ink: string;
+  readonly card: string;
   readonly muted: string;
   readonly grid: string;
   readonly data: string;
@@ -16,6 +17,7 @@ export function palette(): Palette {
   const colour = (name: string): string => style.getPropertyValue(name).trim();
   return {
     ink: colour('--ink'),
+    card: colour('--card'),
     muted: colour('--muted'),
     grid: colour('--grid'),
     data: colour('--plot-data'),

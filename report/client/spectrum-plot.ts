@@ -10,8 +10,8 @@ export interface Drawn {
   showMarks(shown: boolean): void;
 }
 
-const MAIN_HEIGHT = 270;
-const RESIDUAL_HEIGHT = 104;
+const MAIN_HEIGHT = 280;
+const RESIDUAL_HEIGHT = 128;
 /** Residuals beyond this many sigma are drawn at the edge: they are seen, and the rest stays readable. */
 const RESIDUAL_REACH = 6;
 const LEFT_AXIS = 62;
@@ -19,7 +19,10 @@ const FONT = '12px system-ui, sans-serif';
 
 type Series = (number | null)[];
 
-/** Draws data, error band, best model and runner-up, and the residuals below, sharing one wavelength axis. */
+/**
+ * Draws data, best model and runner-up, and the residuals below, sharing one wavelength axis. The error band lies
+ * around the model, where it can be seen: around data this dense it would vanish under them.
+ */
 export function drawSpectrum(into: HTMLElement, spectrum: Unpacked, colours: Palette): Drawn {
   const state = { marks: true };
   const { arms } = spectrum;
@@ -37,8 +40,8 @@ export function drawSpectrum(into: HTMLElement, spectrum: Unpacked, colours: Pal
 
   const perArm = (arm: Arm): Series[] => [
     arm.flux,
-    combine(arm.flux, arm.error, (flux, error) => flux + error),
-    combine(arm.flux, arm.error, (flux, error) => flux - error),
+    combine(arm.model, arm.error, (model, error) => model + error),
+    combine(arm.model, arm.error, (model, error) => model - error),
     arm.model,
     arm.runnerUp ?? arm.model.map(() => null),
   ];
@@ -74,7 +77,7 @@ export function drawSpectrum(into: HTMLElement, spectrum: Unpacked, colours: Pal
       cursor: { sync: { key: `s${spectrumNumber++}`, setSeries: false }, drag: { x: true, y: false } },
       scales: { x: { time: false }, y: { range: (_, low, high) => fluxRange ?? [low, high] } },
       axes: [
-        { ...axis, size: 22, values: (_, values) => values.map(() => '') },
+        { ...axis, size: 4, ticks: { show: false }, values: (_, values) => values.map(() => '') },
         {
           ...axis,
           size: LEFT_AXIS,

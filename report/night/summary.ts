@@ -1,7 +1,6 @@
 import type { CatalogueRow } from '../../store/catalogue-row.ts';
 import type { NightFacts } from '../../store/night-reader.ts';
 import type { Kind } from '../../templates/family.ts';
-import { KINDS } from '../../templates/family.ts';
 import { fibreTallies, oddFibres } from './fibres.ts';
 import type { FibreTally, OddFibre } from './fibres.ts';
 import { outcomeOf } from './outcome.ts';
@@ -44,6 +43,9 @@ export interface NightSummary {
 /** Edges in signal-to-noise per ångström: factors of about 1.7 from hopeless to comfortable. */
 const SNR_EDGES: readonly number[] = [0, 0.5, 1, 2, 3, 5, 10, 20, 50, Infinity];
 
+/** Order of the rows; null = no answer. */
+const KIND_ORDER: readonly (Kind | null)[] = ['galaxy', 'quasar', 'star', null];
+
 const NO_CLASS = '(none given)';
 
 /** Counts a night. Cost: linear in rows. */
@@ -63,7 +65,7 @@ export function summarise(facts: NightFacts, rows: readonly CatalogueRow[]): Nig
     rows: rows.length,
     missing: Math.max(0, facts.expected - rows.length),
     outcomes: count(judged),
-    byKind: [...KINDS, null].map((kind) => ({
+    byKind: KIND_ORDER.map((kind) => ({
       kind,
       counts: count(objects.filter(({ row }) => row.kind === kind)),
     })),

@@ -3,8 +3,18 @@ import type { Markup } from './html.ts';
 import { whole } from './numbers.ts';
 import { ticks } from './ticks.ts';
 
-/** Drawing area in SVG units; the page scales it to its column. */
-export const CHART = { width: 560, height: 250, left: 52, right: 12, top: 14, bottom: 44 } as const;
+/** A drawing area in SVG units; the page scales it to the width of its column. */
+export interface Frame {
+  readonly width: number;
+  readonly height: number;
+}
+
+/** For charts that stand in pairs, and for one that has the whole width. */
+export const HALF_WIDTH: Frame = { width: 560, height: 250 };
+export const FULL_WIDTH: Frame = { width: 1160, height: 220 };
+
+/** Room for the axes: tick labels and titles inside the drawing area. */
+const EDGE = { left: 66, right: 24, top: 14, bottom: 44 } as const;
 
 export interface Tick {
   /** 0..1 along the axis. */
@@ -13,13 +23,13 @@ export interface Tick {
 }
 
 /** Pixel column of a share 0..1 of the x axis. */
-export function chartX(share: number): number {
-  return round(CHART.left + share * (CHART.width - CHART.left - CHART.right));
+export function chartX(frame: Frame, share: number): number {
+  return round(EDGE.left + share * (frame.width - EDGE.left - EDGE.right));
 }
 
 /** Pixel row of a share 0..1 of the y axis, 0 at the bottom. */
-export function chartY(share: number): number {
-  return round(CHART.height - CHART.bottom - share * (CHART.height - CHART.top - CHART.bottom));
+export function chartY(frame: Frame, share: number): number {
+  return round(frame.height - EDGE.bottom - share * (frame.height - EDGE.top - EDGE.bottom));
 }
 
 /** Two decimals are below what a printer resolves at this size. */
@@ -45,6 +55,7 @@ export function countTicks(ceiling: number): readonly Tick[] {
  * @param description what the chart says, in a sentence, for those who do not see it
  */
 export function chart(parts: {
+  readonly frame: Frame;
   readonly title: string;
   readonly description: string;
   readonly xTitle: string;
@@ -54,7 +65,9 @@ export function chart(parts: {
   readonly marks: Markup;
   readonly legend?: Markup;
 }): Markup {
-  const { width, height, left, right, top, bottom } = CHART;
+  const { frame } = parts;
+  const { width, height } = frame;
+  const { left, right, top, bottom } = EDGE;
   const middleX = (left + width - right) / 2;
   const middleY = (top + height - bottom) / 2;
   return html`<figure class="chart">
@@ -63,16 +76,16 @@ export function chart(parts: {
 ${parts.yTicks.map(
   (
     tick,
-  ) => html`<line class="grid" x1="${left}" x2="${width - right}" y1="${chartY(tick.at)}" y2="${chartY(tick.at)}"/>
-<text class="tick" x="${left - 7}" y="${chartY(tick.at) + 4}" text-anchor="end">${tick.label}</text>`,
+  ) => html`<line class="grid" x1="${left}" x2="${width - right}" y1="${chartY(frame, tick.at)}" y2="${chartY(frame, tick.at)}"/>
+<text class="tick" x="${left - 7}" y="${chartY(frame, tick.at) + 4}" text-anchor="end">${tick.label}</text>`,
 )}
 ${parts.marks}
-<line class="axis" x1="${left}" x2="${width - right}" y1="${chartY(0)}" y2="${chartY(0)}"/>
+<line class="axis" x1="${left}" x2="${width - right}" y1="${chartY(frame, 0)}" y2="${chartY(frame, 0)}"/>
 ${parts.xTicks.map(
   (
     tick,
-  ) => html`<line class="axis" x1="${chartX(tick.at)}" x2="${chartX(tick.at)}" y1="${chartY(0)}" y2="${chartY(0) + 4}"/>
-<text class="tick" x="${chartX(tick.at)}" y="${chartY(0) + 17}" text-anchor="middle">${tick.label}</text>`,
+  ) => html`<line class="axis" x1="${chartX(frame, tick.at)}" x2="${chartX(frame, tick.at)}" y1="${chartY(frame, 0)}" y2="${chartY(frame, 0) + 4}"/>
+<text class="tick" x="${chartX(frame, tick.at)}" y="${chartY(frame, 0) + 17}" text-anchor="middle">${tick.label}</text>`,
 )}
 <text class="axis-title" x="${middleX}" y="${height - 6}" text-anchor="middle">${parts.xTitle}</text>
 <text class="axis-title" transform="translate(12 ${middleY}) rotate(-90)" text-anchor="middle">${parts.yTitle}</text>

@@ -4,7 +4,7 @@ import type { SpectrumDetail } from '../../store/night-reader.ts';
 import { reasonMeaning, reasonWords } from '../night/reason-meanings.ts';
 import { html, outside } from './html.ts';
 import type { Insert, Markup } from './html.ts';
-import { answerInWords, fixed, MISSING, percent, withError } from './numbers.ts';
+import { answerInWords, fixed, MISSING, percent } from './numbers.ts';
 
 /** Where the curves of a card come from: embedded, left out for size, or never kept. */
 export type PlotState = 'embedded' | 'left-out' | 'not-kept';
@@ -102,7 +102,7 @@ function candidateTable(candidates: readonly CandidateSummary[]): Markup | null 
     .slice(0, CANDIDATES_SHOWN)
     .map(
       (candidate) =>
-        html`<tr><td>${candidate.kind}</td><td>${candidate.family}</td><td class="number">${withError(candidate.redshift, candidate.redshiftError, 5)}</td><td class="number">${fixed(candidate.chiSquare, 1)}</td><td class="number">${percent(candidate.probability)}</td></tr>`,
+        html`<tr><td>${candidate.kind}</td><td>${candidate.family}</td><td class="number">${fixed(candidate.redshift, 5)}</td><td class="number">${fixed(candidate.chiSquare, 1)}</td><td class="number">${percent(candidate.probability)}</td></tr>`,
     )}</tbody></table>`;
 }
 

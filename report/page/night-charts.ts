@@ -1,7 +1,7 @@
 import { histogram } from '../night/histogram.ts';
 import { reasonMeaning } from '../night/reason-meanings.ts';
 import type { NightSummary } from '../night/summary.ts';
-import { chart, chartX, chartY, round } from './chart.ts';
+import { chart, chartX, chartY, FULL_WIDTH, HALF_WIDTH, round } from './chart.ts';
 import { html } from './html.ts';
 import type { Markup } from './html.ts';
 import { counted, fixed, percent, whole } from './numbers.ts';
@@ -19,6 +19,7 @@ export function confidenceChart(summary: NightSummary): Markup {
   const counts = (values: readonly number[]): readonly number[] =>
     histogram(values, 0, 1, CONFIDENCE_BINS).counts;
   return stackedBars({
+    frame: HALF_WIDTH,
     title: 'How sure the answers are',
     description: `Histogram of confidence from 0 to 1 for ${whole(summary.outcomes.accepted)} accepted and ${whole(summary.outcomes.flagged)} flagged spectra.`,
     xTitle: 'confidence: probability that the redshift is right',
@@ -45,6 +46,7 @@ export function redshiftChart(summary: NightSummary): Markup {
     ).counts;
   const shown = REDSHIFT_LABELS.filter((z) => Math.log1p(z) <= end);
   return stackedBars({
+    frame: HALF_WIDTH,
     title: 'Redshifts of galaxies and quasars, accepted',
     description: `Histogram of redshift for ${counted(galaxy.length, 'galaxy', 'galaxies')} and ${counted(quasar.length, 'quasar', 'quasars')}, up to ${fixed(highest, 2)}.`,
     xTitle: 'redshift z (bins even in ln(1 + z))',
@@ -62,6 +64,7 @@ export function velocityChart(summary: NightSummary): Markup {
   const velocities = summary.starVelocities;
   const reach = Math.max(100, ...velocities.map((velocity) => Math.abs(velocity))) * 1.02;
   return stackedBars({
+    frame: HALF_WIDTH,
     title: 'Velocities of stars, accepted',
     description: `Histogram of the barycentric velocity of ${counted(velocities.length, 'star', 'stars')}.`,
     xTitle: 'barycentric velocity, km/s',
@@ -85,6 +88,7 @@ export function successChart(summary: NightSummary): Markup {
   const bins = summary.success;
   const label = (value: number): string => (value === Infinity ? '∞' : String(value));
   return chart({
+    frame: HALF_WIDTH,
     title: 'Accepted against signal-to-noise',
     description: `Share of spectra accepted per range of signal-to-noise: ${bins
       .filter((bin) => bin.accepted.share !== null)
@@ -100,13 +104,13 @@ export function successChart(summary: NightSummary): Markup {
     marks: html`${bins.map((bin, i) => {
       const { share, low, high, of, hits } = bin.accepted;
       if (share === null) return null;
-      const left = chartX((i + 0.1) / bins.length);
-      const right = chartX((i + 0.9) / bins.length);
-      const middle = chartX((i + 0.5) / bins.length);
-      const y = chartY(share * TOP);
-      return html`<rect class="tone-accepted soft" x="${left}" y="${y}" width="${round(right - left)}" height="${round(chartY(0) - y)}"/>
-<line class="whisker" x1="${middle}" x2="${middle}" y1="${chartY(low * TOP)}" y2="${chartY(high * TOP)}"/>
-<text class="tick" x="${middle}" y="${chartY(high * TOP) - 4}" text-anchor="middle">${hits}/${of}</text>`;
+      const left = chartX(HALF_WIDTH, (i + 0.1) / bins.length);
+      const right = chartX(HALF_WIDTH, (i + 0.9) / bins.length);
+      const middle = chartX(HALF_WIDTH, (i + 0.5) / bins.length);
+      const y = chartY(HALF_WIDTH, share * TOP);
+      return html`<rect class="tone-accepted soft" x="${left}" y="${y}" width="${round(right - left)}" height="${round(chartY(HALF_WIDTH, 0) - y)}"/>
+<line class="whisker" x1="${middle}" x2="${middle}" y1="${chartY(HALF_WIDTH, low * TOP)}" y2="${chartY(HALF_WIDTH, high * TOP)}"/>
+<text class="tick" x="${middle}" y="${chartY(HALF_WIDTH, high * TOP) - 4}" text-anchor="middle">${hits}/${of}</text>`;
     })}`,
   });
 }
@@ -135,6 +139,7 @@ export function fibreChart(summary: NightSummary): Markup {
   if (fibres.length === 0) return html`<p>No spectrum names its fibre.</p>`;
   // By rank, not by number: fibre numbers may have holes of any size.
   const bars = stackedBars({
+    frame: FULL_WIDTH,
     title: 'By fibre',
     description: `Accepted and failed spectra of ${whole(fibres.length)} fibres. ${oddFibreSentence(summary)}`,
     xTitle: 'fibre (in order of number)',

@@ -1,5 +1,5 @@
 import { chart, chartX, chartY, countCeiling, countTicks, legend, round } from './chart.ts';
-import type { Tick } from './chart.ts';
+import type { Frame, Tick } from './chart.ts';
 import { html } from './html.ts';
 import type { Markup } from './html.ts';
 
@@ -17,6 +17,7 @@ export interface BarLayer {
  * @param layers at least one
  */
 export function stackedBars(parts: {
+  readonly frame: Frame;
   readonly title: string;
   readonly description: string;
   readonly xTitle: string;
@@ -32,14 +33,14 @@ export function stackedBars(parts: {
   // A hairline between bars, but never at the cost of the bar itself.
   const gap = Math.min(0.15 / bins, 0.002);
   const bars = totals.map((_, bin) => {
-    const left = chartX(bin / bins + gap);
-    const width = round(chartX((bin + 1) / bins - gap) - left);
+    const left = chartX(parts.frame, bin / bins + gap);
+    const width = round(chartX(parts.frame, (bin + 1) / bins - gap) - left);
     let below = 0;
     return parts.layers.map((layer) => {
       const count = layer.counts[bin]!;
       if (count === 0) return null;
-      const y = chartY((below + count) / ceiling);
-      const height = round(chartY(below / ceiling) - y);
+      const y = chartY(parts.frame, (below + count) / ceiling);
+      const height = round(chartY(parts.frame, below / ceiling) - y);
       below += count;
       return html`<rect class="${layer.tone}" x="${left}" y="${y}" width="${width}" height="${height}"/>`;
     });

@@ -7,11 +7,11 @@ export const STYLE = `
 :root{--paper:#faf9f5;--card:#ffffff;--ink:#1c2630;--muted:#55616b;--rule:#d9d6cc;--grid:#e9e6dd;
 --accepted:#2a7f86;--flagged:#d9962b;--unreadable:#5a5560;--galaxy:#c2531a;--quasar:#2458b8;--star:#8a3f86;
 --galaxy-text:#a5430f;--quasar-text:#2458b8;--star-text:#7d3579;
---plot-data:#3d4a55;--plot-band:rgba(61,74,85,.20);--plot-best:#c2531a;--plot-runner-up:#2458b8;--plot-mask:rgba(120,110,80,.16);color-scheme:light}
+--plot-data:#8b959d;--plot-band:rgba(194,83,26,.24);--plot-best:#c2531a;--plot-runner-up:#2458b8;--plot-mask:rgba(120,110,80,.16);color-scheme:light}
 @media (prefers-color-scheme:dark){@media screen{:root{--paper:#14191e;--card:#1b2229;--ink:#e6e4dd;--muted:#a5afb8;--rule:#343e48;--grid:#29323b;
 --accepted:#4fa9b0;--flagged:#e5ab4a;--unreadable:#8d8795;--galaxy:#ee8a52;--quasar:#7ea6f0;--star:#cf86ca;
 --galaxy-text:#ee8a52;--quasar-text:#8fb2f3;--star-text:#d795d2;
---plot-data:#c3ccd4;--plot-band:rgba(195,204,212,.22);--plot-best:#ee8a52;--plot-runner-up:#7ea6f0;--plot-mask:rgba(220,205,150,.13);color-scheme:dark}}}
+--plot-data:#8793a0;--plot-band:rgba(238,138,82,.26);--plot-best:#ee8a52;--plot-runner-up:#7ea6f0;--plot-mask:rgba(220,205,150,.13);color-scheme:dark}}}
 *{box-sizing:border-box}
 body{margin:0 auto;max-width:1240px;padding:28px 24px 60px;background:var(--paper);color:var(--ink);font:15px/1.5 system-ui,"Segoe UI","DejaVu Sans",sans-serif}
 h1{font-size:34px;line-height:1.15;margin:0 0 8px;letter-spacing:-.01em;overflow-wrap:anywhere}
@@ -43,7 +43,7 @@ svg.bar{width:120px;height:10px;display:inline-block}
 .tone-galaxy{fill:var(--galaxy)}.tone-quasar{fill:var(--quasar)}.tone-star{fill:var(--star)}.soft{fill-opacity:.75}
 .wide{margin-top:26px}
 .reason{font:600 13px/1.4 ui-monospace,"DejaVu Sans Mono",monospace;background:var(--grid);padding:1px 6px;border-radius:3px;white-space:nowrap;overflow-wrap:normal}
-.reasons th{width:11em}.reasons td:last-child{width:140px}
+.reasons thead th:first-child{width:11em}.reasons thead th:nth-child(3){width:6em}.reasons thead th:last-child{width:140px}
 .note{color:var(--muted);max-width:62em}
 #controls form{display:flex;flex-wrap:wrap;gap:10px 16px;align-items:end;background:var(--card);border:1px solid var(--rule);border-radius:3px;padding:12px 14px}
 #controls label{display:flex;flex-direction:column;font-size:13px;color:var(--muted);gap:2px}
@@ -68,10 +68,12 @@ code,pre{font:13px/1.4 ui-monospace,"DejaVu Sans Mono",monospace}pre{white-space
 .no-plot{color:var(--muted);border:1px dashed var(--rule);padding:14px;margin:0}
 .plot-tools{display:flex;flex-wrap:wrap;gap:4px 16px;font-size:13px;align-items:center;margin-bottom:4px}
 .key::before{content:"";display:inline-block;width:18px;height:0;border-top:3px solid;margin-right:6px;vertical-align:middle}
+.key-band::before{height:12px;border:0;background:var(--plot-band)}
 .key-data::before{border-color:var(--plot-data)}.key-best::before{border-color:var(--plot-best)}
 .key-runner-up::before{border-color:var(--plot-runner-up);border-top-style:dashed}
 .key-lines::before{width:0;height:12px;border-top:0;border-left:2px solid var(--plot-best)}
 .key-mask::before{height:12px;border:0;background:var(--plot-mask);outline:1px solid var(--rule)}
+.key-galaxy::before{border-color:var(--galaxy)}.key-quasar::before{border-color:var(--quasar)}.key-star::before{border-color:var(--star)}
 .key input{margin:0 2px 0 0;vertical-align:middle}.hint{color:var(--muted)}
 .folded .body{display:none}.folded .card{margin-bottom:6px;padding:8px 14px;contain-intrinsic-size:auto 90px}
 @media (max-width:900px){.body{grid-template-columns:1fr}}

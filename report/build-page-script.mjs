@@ -16,7 +16,7 @@ export async function buildPageScript(outDir) {
       emptyOutDir: false,
       target: 'es2022',
       lib: {
-        entry: fileURLToPath(new URL('./main.ts', import.meta.url)),
+        entry: fileURLToPath(new URL('./client/main.ts', import.meta.url)),
         name: 'nightReport',
         formats: ['iife'],
         fileName: () => 'page-script.js',
@@ -26,5 +26,5 @@ export async function buildPageScript(outDir) {
 }
 
 if (process.argv[1] === fileURLToPath(import.meta.url)) {
-  await buildPageScript(fileURLToPath(new URL('../../dist/report/client/', import.meta.url)));
+  await buildPageScript(fileURLToPath(new URL('../dist/report/client/', import.meta.url)));
 }
