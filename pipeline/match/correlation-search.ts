@@ -58,6 +58,8 @@ export function correlationSearch(
           { offset: 0, values: weight },
         ],
         layout,
+        workspace,
+        `features ${width}`,
       );
       transforms = { weightedFeatures: weightedFeatures!, weight: weights! };
       transformsByLayout.set(key, transforms);

@@ -70,7 +70,7 @@ export function matchFamilies(
   workspace: MatchWorkspace = createMatchWorkspace(),
 ): Match {
   const data = prepareSearch(grid, options);
-  const transformsOf = transformsByLayout(data);
+  const transformsOf = transformsByLayout(data, workspace);
   const correlate = correlationSearch(grid, options, workspace);
   const matches = families.map((family): FamilyMatch => {
     const scan = matchFamily(grid, family, data, transformsOf, options, workspace);
@@ -91,7 +91,10 @@ export function matchFamilies(
 }
 
 /** Data transforms, shared by the families whose layouts cut the data alike. */
-function transformsByLayout(data: SearchData): (layout: LagLayout) => DataTransforms {
+function transformsByLayout(
+  data: SearchData,
+  workspace: MatchWorkspace,
+): (layout: LagLayout) => DataTransforms {
   const known = new Map<string, DataTransforms>();
   return (layout) => {
     const key = `${layout.size} ${layout.segment}`;
@@ -103,6 +106,8 @@ function transformsByLayout(data: SearchData): (layout: LagLayout) => DataTransf
     const [weight, weightedFlux, ...nuisances] = transformVectors(
       [{ offset: 0, values: data.weight }, { offset: 0, values: data.weightedFlux }, ...polynomials],
       layout,
+      workspace,
+      'search',
     );
     const fresh = { weight: weight!, weightedFlux: weightedFlux!, nuisances };
     known.set(key, fresh);

@@ -1,5 +1,5 @@
 import { choleskyInPlace, forwardSubstitute } from '../core/cholesky.ts';
-import { explained, type NormalEntries } from './normal-entries.ts';
+import type { NormalEntries } from './normal-entries.ts';
 import type { Nuisance, SearchData } from './search-data.ts';
 
 /**
@@ -9,73 +9,67 @@ import type { Nuisance, SearchData } from './search-data.ts';
 const NUISANCE_RIDGE = 1e-12;
 
 /**
- * Chi-square at a lag at which the family's grid covers data pixels first .. end−1 only. The pixels inside are
- * fitted by the family and polynomials, those outside by polynomials of their own: every lag is judged on all
- * the data, and a family gains nothing by looking away.
+ * Takes the polynomials out of the normal equations at a lag at which the family's grid covers data pixels
+ * first .. end−1 only. The pixels inside are fitted by the family and polynomials, those outside by polynomials
+ * of their own: every lag is judged on all the data, and a family gains nothing by looking away.
+ *
+ * @param t place of the lag in the entries, which are changed there
+ * @returns chi-square of the polynomials alone, inside plus outside
  */
-export function coveredChiSquare(
+export function eliminateCovered(
   entries: NormalEntries,
   data: SearchData,
   t: number,
   first: number,
   end: number,
 ): number {
-  const { size, gram } = entries;
-  const matrix = new Float64Array(size * size);
-  const right = new Float64Array(size);
-  for (let j = 0; j < size; j++) {
-    right[j] = entries.right[j]![t]!;
-    for (let k = 0; k <= j; k++) matrix[j * size + k] = gram[j * size + k]?.[t] ?? 0;
-  }
   let chiSquare = data.polynomialChiSquare;
   let before = 0;
   for (const nuisance of data.nuisances) {
-    const terms = nuisance.weightedRows.length;
-    const columns = Array.from({ length: size }, (_, k) =>
-      Float64Array.from({ length: terms }, (_unused, p) => entries.nuisance[(before + p) * size + k]![t]!),
-    );
-    chiSquare -= eliminateInside(nuisance, first, end, columns, matrix, right);
+    chiSquare -= eliminateInside(nuisance, before, first, end, entries, t);
     chiSquare -= explainedOutside(nuisance, first, end);
-    before += terms;
+    before += nuisance.weightedRows.length;
   }
-  return chiSquare - explained(matrix, right, size);
+  return chiSquare;
 }
 
 /** Takes one arm's polynomials out of the normal equations of the pixels inside; returns what they explain. */
 function eliminateInside(
   nuisance: Nuisance,
+  before: number,
   first: number,
   end: number,
-  columns: readonly Float64Array[],
-  matrix: Float64Array,
-  right: Float64Array,
+  { size, gram, right, nuisance: columns }: NormalEntries,
+  t: number,
 ): number {
   const terms = nuisance.weightedRows.length;
   const { factor, data } = partOf(nuisance, first, end);
   if (!choleskyInPlace(factor, terms)) return 0;
   forwardSubstitute(factor, terms, data);
-  for (const column of columns) forwardSubstitute(factor, terms, column);
-  const size = columns.length;
-  for (let j = 0; j < size; j++) {
-    right[j] = right[j]! - dot(columns[j]!, data);
-    for (let k = 0; k <= j; k++) matrix[j * size + k] = matrix[j * size + k]! - dot(columns[j]!, columns[k]!);
+  const whitened = new Float64Array(size * terms);
+  for (let k = 0; k < size; k++) {
+    const column = whitened.subarray(k * terms, (k + 1) * terms);
+    for (let p = 0; p < terms; p++) column[p] = columns[(before + p) * size + k]![t]!;
+    forwardSubstitute(factor, terms, column);
+    right[k]![t] = right[k]![t]! - dot(column, data);
+    for (let j = 0; j <= k; j++) {
+      const target = gram[k * size + j]!;
+      target[t] = target[t]! - dot(column, whitened.subarray(j * terms, (j + 1) * terms));
+    }
   }
   return dot(data, data);
 }
 
-/** Chi-square that the arm's polynomials take away from the pixels outside. */
+/** Chi-square that the arm's polynomials take away from the pixels outside: those before and those behind. */
 function explainedOutside(nuisance: Nuisance, first: number, end: number): number {
   const terms = nuisance.weightedRows.length;
-  const whole = partOf(nuisance, -Infinity, Infinity);
-  const inside = partOf(nuisance, first, end);
-  for (let i = 0; i < whole.factor.length; i++) whole.factor[i] = whole.factor[i]! - inside.factor[i]!;
-  for (let p = 0; p < terms; p++) {
-    whole.data[p] = whole.data[p]! - inside.data[p]!;
-    whole.factor[p * terms + p] = whole.factor[p * terms + p]! + NUISANCE_RIDGE;
-  }
-  if (!choleskyInPlace(whole.factor, terms)) return 0;
-  forwardSubstitute(whole.factor, terms, whole.data);
-  return dot(whole.data, whole.data);
+  const below = partOf(nuisance, -Infinity, first);
+  const above = partOf(nuisance, end, Infinity);
+  for (let i = 0; i < below.factor.length; i++) below.factor[i] = below.factor[i]! + above.factor[i]!;
+  for (let p = 0; p < terms; p++) below.data[p] = below.data[p]! + above.data[p]!;
+  if (!choleskyInPlace(below.factor, terms)) return 0;
+  forwardSubstitute(below.factor, terms, below.data);
+  return dot(below.data, below.data);
 }
 
 /** Gram matrix (lower triangle, with ridge) and data products of an arm's polynomials over axis pixels first .. end−1. */
@@ -87,7 +81,7 @@ function partOf(
   const terms = nuisance.weightedRows.length;
   const length = nuisance.weightedRows[0]?.length ?? 0;
   const from = Math.min(Math.max(first - nuisance.offset, 0), length);
-  const to = Math.min(Math.max(end - nuisance.offset, 0), length);
+  const to = Math.min(Math.max(end - nuisance.offset, from), length);
   const factor = new Float64Array(terms * terms);
   const data = new Float64Array(terms);
   for (let p = 0, entry = 0; p < terms; p++) {

@@ -3,10 +3,10 @@ import { correlatePacked } from './correlate-packed.ts';
 import type { VectorTransform } from './data-transforms.ts';
 import { familyTransforms } from './family-transforms.ts';
 import type { LagLayout } from './lag-layout.ts';
-import { explained, type NormalEntries } from './normal-entries.ts';
-import { coveredChiSquare } from './partial-cover.ts';
+import { eliminateOrthonormal, type NormalEntries, solveExplained } from './normal-entries.ts';
+import { eliminateCovered } from './partial-cover.ts';
 import type { SearchData } from './search-data.ts';
-import { type MatchWorkspace, scratch } from './workspace.ts';
+import { type MatchWorkspace, scratch, zeroed } from './workspace.ts';
 
 /** Chi-square of one family at every lag, lowest lag (highest redshift) first; NaN where too little is covered. */
 export interface LagScan {
@@ -45,22 +45,51 @@ export function scanFamily(
   const entries = normalEntries(family, transforms, layout, workspace);
   const chiSquare = new Float64Array(layout.lags);
   const covered = new Float64Array(layout.lags);
-  const total = data.weightSums[data.length]!;
-  const size = entries.size;
-  const matrix = new Float64Array(size * size);
-  const right = new Float64Array(size);
+  const inside = coverOf(data, family.grid.length, lowestLag, layout.lags);
+  const { wholeFirst, wholeEnd } = inside;
+  eliminateOrthonormal(entries, wholeFirst, wholeEnd);
+  solveExplained(entries, wholeFirst, wholeEnd, chiSquare);
+  for (let t = wholeFirst; t < wholeEnd; t++) {
+    covered[t] = 1;
+    chiSquare[t] = data.polynomialChiSquare - chiSquare[t]!;
+  }
   for (let t = 0; t < layout.lags; t++) {
-    const lag = lowestLag + t;
-    const first = Math.min(Math.max(0, -lag), data.length);
-    const end = Math.max(first, Math.min(data.length, family.grid.length - lag));
-    const inside = data.weightSums[end]! - data.weightSums[first]!;
-    covered[t] = inside / total;
-    const whole = data.weightSums[first] === 0 && data.weightSums[end] === total;
-    if (whole) chiSquare[t] = wholeChiSquare(entries, data, t, matrix, right);
-    else if (covered[t]! < leastCovered) chiSquare[t] = NaN;
-    else chiSquare[t] = coveredChiSquare(entries, data, t, first, end);
+    if (t >= wholeFirst && t < wholeEnd) continue;
+    const first = inside.firstPixel(t);
+    const end = inside.endPixel(t);
+    covered[t] = (data.weightSums[end]! - data.weightSums[first]!) / data.weightSums[data.length]!;
+    chiSquare[t] = NaN;
+    if (covered[t]! < leastCovered) continue;
+    const polynomials = eliminateCovered(entries, data, t, first, end);
+    solveExplained(entries, t, t + 1, chiSquare);
+    chiSquare[t] = polynomials - chiSquare[t]!;
   }
   return { chiSquare, covered };
+}
+
+/** Which data pixels lie inside the family's grid at each lag, and at which lags all that have weight do. */
+function coverOf(
+  data: SearchData,
+  familyLength: number,
+  lowestLag: number,
+  lags: number,
+): {
+  wholeFirst: number;
+  wholeEnd: number;
+  firstPixel(t: number): number;
+  endPixel(t: number): number;
+} {
+  const firstWeighted = data.weight.findIndex((w) => w > 0);
+  const lastWeighted = data.weight.findLastIndex((w) => w > 0);
+  const within = (t: number): number => Math.min(Math.max(t, 0), lags);
+  const wholeFirst = within(-firstWeighted - lowestLag);
+  const firstPixel = (t: number): number => Math.min(Math.max(0, -(lowestLag + t)), data.length);
+  return {
+    wholeFirst,
+    wholeEnd: Math.max(wholeFirst, within(familyLength - lastWeighted - lowestLag)),
+    firstPixel,
+    endPixel: (t) => Math.max(firstPixel(t), Math.min(data.length, familyLength - lowestLag - t)),
+  };
 }
 
 function normalEntries(
@@ -73,13 +102,14 @@ function normalEntries(
   const size = family.basis.length;
   const re = scratch(workspace, 're', layout.size).subarray(0, layout.size);
   const im = scratch(workspace, 'im', layout.size).subarray(0, layout.size);
-  const gram = new Array<Float64Array | null>(size * size).fill(null);
+  const gram: Float64Array[] = [];
+  for (let j = 0; j < size; j++) {
+    for (let k = 0; k <= j; k++) gram[j * size + k] = zeroed(workspace, `gram ${j} ${k}`, layout.lags);
+  }
   for (const pair of templates.products) {
     correlatePacked(transforms.weight, pair, layout, re, im, (entry) => {
       const [j, k] = templates.productOf[entry]!;
-      const array = scratch(workspace, `gram ${j} ${k}`, layout.lags);
-      gram[j * size + k] = array;
-      return array;
+      return gram[j * size + k]!;
     });
   }
   const right: Float64Array[] = [];
@@ -98,24 +128,4 @@ function normalEntries(
     });
   }
   return { size, gram, right, nuisance };
-}
-
-/** All of the data inside the family's grid: the polynomials' Gram matrix is the unit matrix. */
-function wholeChiSquare(
-  entries: NormalEntries,
-  data: SearchData,
-  t: number,
-  matrix: Float64Array,
-  right: Float64Array,
-): number {
-  const { size, gram, nuisance } = entries;
-  for (let j = 0; j < size; j++) {
-    right[j] = entries.right[j]![t]!;
-    for (let k = 0; k <= j; k++) {
-      let sum = gram[j * size + k]?.[t] ?? 0;
-      for (let p = 0; p < nuisance.length; p += size) sum -= nuisance[p + j]![t]! * nuisance[p + k]![t]!;
-      matrix[j * size + k] = sum;
-    }
-  }
-  return data.polynomialChiSquare - explained(matrix, right, size);
 }
