@@ -1,5 +1,6 @@
 export { bytesInMemory } from './byte-source.ts';
 export type { ByteSource } from './byte-source.ts';
+export { mjdOfIsoDate } from './calendar.ts';
 export { DEFAULT_READ_LIMITS } from './fits/index.ts';
 export type { FitsFile, ReadLimits } from './fits/index.ts';
 export type { ArmLayout, ArraySource, ExposureTable, Layout, TargetColumns } from './layout.ts';

@@ -1,4 +1,4 @@
-import type { Spectrum } from '../decode/index.ts';
+import { mjdOfIsoDate, type Spectrum } from '../decode/index.ts';
 import { barycentricVelocityKmS } from './barycentric.ts';
 
 /** What is to be done about the motion of the observatory, and how that is known. */
@@ -18,26 +18,9 @@ export function barycentricFrame(spectrum: Spectrum): BarycentricFrame {
   if (frame === 'barycentric' || frame === 'heliocentric') {
     return { velocityKmS: spectrum.appliedCorrectionKmS, source: 'already-applied' };
   }
-  const milliseconds = observedAt === null ? NaN : parseUtc(observedAt);
-  const known = site !== null && raDeg !== null && decDeg !== null && Number.isFinite(milliseconds);
+  const mjd = observedAt === null ? null : mjdOfIsoDate(observedAt);
+  const known = site !== null && raDeg !== null && decDeg !== null && mjd !== null;
   if (frame !== 'topocentric' || !known || spectrum.coaddedOverNights)
     return { velocityKmS: null, source: 'unknown' };
-  return { velocityKmS: barycentricVelocityKmS(milliseconds, site, raDeg, decDeg), source: 'applied-here' };
-}
-
-/**
- * Milliseconds since 1970 of an ISO 8601 UTC time, NaN when it is not one. Days from the civil calendar by
- * Hinnant's algorithm (public domain), because this folder has no clock and so no calendar of the platform.
- */
-export function parseUtc(text: string): number {
-  const parts = /^(\d{4})-(\d\d)-(\d\d)(?:T(\d\d):(\d\d)(?::(\d\d(?:\.\d+)?))?)?Z?$/.exec(text);
-  if (!parts) return NaN;
-  const [year, month, day, hour, minute, second] = parts.slice(1).map((part) => Number(part || 0));
-  const y = month! <= 2 ? year! - 1 : year!;
-  const era = Math.floor(y / 400);
-  const yearOfEra = y - era * 400;
-  const dayOfYear = Math.floor((153 * (month! + (month! > 2 ? -3 : 9)) + 2) / 5) + day! - 1;
-  const dayOfEra = yearOfEra * 365 + Math.floor(yearOfEra / 4) - Math.floor(yearOfEra / 100) + dayOfYear;
-  const days = era * 146_097 + dayOfEra - 719_468;
-  return ((days * 24 + hour!) * 60 + minute!) * 60_000 + second! * 1000;
+  return { velocityKmS: barycentricVelocityKmS(mjd, site, raDeg, decDeg), source: 'applied-here' };
 }

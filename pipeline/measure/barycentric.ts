@@ -3,6 +3,8 @@ import type { Site } from '../decode/spectrum.ts';
 
 const AU_KM = 149_597_870.7;
 const DAY_S = 86_400;
+/** The library counts days of UT from 2000-01-01 12:00. */
+const MJD_OF_J2000 = 51_544.5;
 const SPEED_OF_LIGHT_KM_S = 299_792.458;
 /** GM over c² (km): Sun, IAU 2015 nominal; Earth, IERS 2010. */
 const SUN_GM_OVER_C2_KM = 1.476625;
@@ -15,16 +17,11 @@ const EARTH_GM_OVER_C2_KM = 4.435028e-6;
  * relativity and the potential of Sun and Earth; no proper motion or parallax (below 1 m/s for survey targets).
  * Good to 1.5 m/s against checks made with the ERFA ephemeris.
  *
- * @param observedAt mid-exposure, milliseconds of UTC since 1970
+ * @param mjdUtc mid-exposure, Modified Julian Date, UTC; UT1 − UTC (< 0.9 s) costs at most 0.02 m/s
  * @returns v in km/s, positive when the observatory moves towards the target
  */
-export function barycentricVelocityKmS(
-  observedAt: number,
-  site: Site,
-  raDeg: number,
-  decDeg: number,
-): number {
-  const time = MakeTime(daysSinceJ2000(observedAt));
+export function barycentricVelocityKmS(mjdUtc: number, site: Site, raDeg: number, decDeg: number): number {
+  const time = MakeTime(mjdUtc - MJD_OF_J2000);
   const earth = BaryState(Body.Earth, time);
   const sun = BaryState(Body.Sun, time);
   // The library's heights are metres; its frame here is J2000 (ofdate = false), ICRS to 0.02 arcsec.
@@ -50,10 +47,4 @@ export function barycentricVelocityKmS(
 function velocitySum(a: StateVector, b: StateVector): number[] {
   const scale = AU_KM / DAY_S;
   return [(a.vx + b.vx) * scale, (a.vy + b.vy) * scale, (a.vz + b.vz) * scale];
-}
-
-/** The library takes days of UT since 2000-01-01 12:00; UT1 − UTC (< 0.9 s) costs at most 0.02 m/s. */
-function daysSinceJ2000(milliseconds: number): number {
-  const j2000Milliseconds = 946_728_000_000;
-  return (milliseconds - j2000Milliseconds) / 86_400_000;
 }

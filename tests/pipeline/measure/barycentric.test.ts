@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest';
+import { mjdOfIsoDate } from '../../../pipeline/decode/index.ts';
 import { barycentricVelocityKmS } from '../../../pipeline/measure/barycentric.ts';
 
 /**
@@ -19,7 +20,7 @@ describe('barycentricVelocityKmS()', () => {
     'agrees with astropy within 1.5 m/s in case %s',
     (_name, longitudeEastDeg, latitudeDeg, heightM, ra, dec, utc, expectedMS) => {
       const site = { latitudeDeg, longitudeEastDeg, heightM };
-      const velocityMS = 1000 * barycentricVelocityKmS(Date.parse(utc), site, ra, dec);
+      const velocityMS = 1000 * barycentricVelocityKmS(mjdOfIsoDate(utc)!, site, ra, dec);
       expect(Math.abs(velocityMS - expectedMS)).toBeLessThan(1.5);
     },
   );
