@@ -46,16 +46,17 @@ export function fftOfSize(size: number): Fft {
 function makePlan(size: number): Fft {
   const passes: Pass[] = [];
   let block = size;
-  for (; block >= 4; block /= 4) passes.push(makePass(block));
-  const lastIsRadix2 = block === 2;
+  for (; block > 4; block /= 4) passes.push(makePass(block));
+  const lastForward = block === 4 ? forwardFour : pairPass;
+  const firstInverse = block === 4 ? inverseFour : pairPass;
   return {
     size,
     forward(re, im) {
       for (const pass of passes) forwardPass(pass, size, re, im);
-      if (lastIsRadix2) pairPass(size, re, im);
+      lastForward(size, re, im);
     },
     inverse(re, im) {
-      if (lastIsRadix2) pairPass(size, re, im);
+      firstInverse(size, re, im);
       for (let p = passes.length - 1; p >= 0; p--) inversePass(passes[p]!, size, re, im);
     },
   };
@@ -146,7 +147,51 @@ function inversePass(pass: Pass, size: number, re: Float64Array, im: Float64Arra
   }
 }
 
-/** The radix-2 step on neighbours, its own inverse up to scale; needed when log2(size) is odd. */
+/** The last forward pass when log2(size) is even: blocks of four, all twiddle factors 1. */
+function forwardFour(size: number, re: Float64Array, im: Float64Array): void {
+  for (let i = 0; i < size; i += 4) {
+    const evenRe = re[i]! + re[i + 2]!;
+    const evenIm = im[i]! + im[i + 2]!;
+    const evenDiffRe = re[i]! - re[i + 2]!;
+    const evenDiffIm = im[i]! - im[i + 2]!;
+    const oddRe = re[i + 1]! + re[i + 3]!;
+    const oddIm = im[i + 1]! + im[i + 3]!;
+    const oddDiffRe = re[i + 1]! - re[i + 3]!;
+    const oddDiffIm = im[i + 1]! - im[i + 3]!;
+    re[i] = evenRe + oddRe;
+    im[i] = evenIm + oddIm;
+    re[i + 1] = evenRe - oddRe;
+    im[i + 1] = evenIm - oddIm;
+    re[i + 2] = evenDiffRe + oddDiffIm;
+    im[i + 2] = evenDiffIm - oddDiffRe;
+    re[i + 3] = evenDiffRe - oddDiffIm;
+    im[i + 3] = evenDiffIm + oddDiffRe;
+  }
+}
+
+/** The first inverse pass when log2(size) is even. */
+function inverseFour(size: number, re: Float64Array, im: Float64Array): void {
+  for (let i = 0; i < size; i += 4) {
+    const sumRe = re[i]! + re[i + 1]!;
+    const sumIm = im[i]! + im[i + 1]!;
+    const diffRe = re[i]! - re[i + 1]!;
+    const diffIm = im[i]! - im[i + 1]!;
+    const plusRe = re[i + 2]! + re[i + 3]!;
+    const plusIm = im[i + 2]! + im[i + 3]!;
+    const minusRe = re[i + 2]! - re[i + 3]!;
+    const minusIm = im[i + 2]! - im[i + 3]!;
+    re[i] = sumRe + plusRe;
+    im[i] = sumIm + plusIm;
+    re[i + 1] = diffRe - minusIm;
+    im[i + 1] = diffIm + minusRe;
+    re[i + 2] = sumRe - plusRe;
+    im[i + 2] = sumIm - plusIm;
+    re[i + 3] = diffRe + minusIm;
+    im[i + 3] = diffIm - minusRe;
+  }
+}
+
+/** The radix-2 step on neighbours, its own inverse up to scale; the last step when log2(size) is odd. */
 function pairPass(size: number, re: Float64Array, im: Float64Array): void {
   for (let i = 0; i < size; i += 2) {
     const r = re[i]! - re[i + 1]!;
