@@ -26,8 +26,15 @@ const ORDERS: Readonly<Record<string, (a: HTMLElement, b: HTMLElement) => number
  * Builds the controls above the list.
  *
  * @param changed called after the list was filtered, sorted or folded
+ * @param keep draws all shown plots and keeps them, or goes back to those near the screen
  */
-export function addControls(into: HTMLElement, list: HTMLElement, cards: Cards, changed: () => void): void {
+export function addControls(
+  into: HTMLElement,
+  list: HTMLElement,
+  cards: Cards,
+  changed: () => void,
+  keep: (all: boolean) => Promise<void>,
+): void {
   const form = document.createElement('form');
   form.addEventListener('submit', (event) => event.preventDefault());
   const reasons = distinct(cards.flatMap((card) => text(card, 'reasons').split(' ')));
@@ -40,14 +47,12 @@ export function addControls(into: HTMLElement, list: HTMLElement, cards: Cards, 
   for (const { field } of [from, to]) Object.assign(field, { min: '0', max: '100' });
   const search = input('name or id contains', 'search', '');
   const order = select('order', Object.keys(ORDERS));
-  const folded = document.createElement('label');
-  const fold = document.createElement('input');
-  fold.type = 'checkbox';
-  folded.className = 'fold';
-  folded.append(fold, ' list only');
+  const folded = checkbox('list only');
+  // A page is printed as it is drawn: without this only the plots near the screen would be on paper.
+  const paper = checkbox('draw all plots, for paper');
   const told = document.createElement('p');
   told.setAttribute('role', 'status');
-  form.append(reason.label, kind.label, fibre.label, from.label, to.label, search.label, order.label, folded);
+  form.append(...[reason, kind, fibre, from, to, search, order, folded, paper].map(({ label }) => label));
   into.append(form, told);
 
   const update = (): void => {
@@ -66,11 +71,19 @@ export function addControls(into: HTMLElement, list: HTMLElement, cards: Cards, 
     for (const card of cards) card.hidden = hidden.has(card);
     // Array sort is stable: equal keys keep the order the report was written in.
     list.replaceChildren(...cards.toSorted(ORDERS[wish.order]!));
-    list.classList.toggle('folded', fold.checked);
+    list.classList.toggle('folded', folded.field.checked);
     told.textContent = `${shown.length} of ${cards.length} shown`;
     changed();
   };
-  form.addEventListener('input', update);
+  form.addEventListener('input', (event) => {
+    if (event.target !== paper.field) update();
+  });
+  paper.field.addEventListener('change', () => {
+    paper.field.disabled = true;
+    void keep(paper.field.checked).finally(() => {
+      paper.field.disabled = false;
+    });
+  });
   update();
 }
 
@@ -123,4 +136,13 @@ function input(
   field.type = type;
   field.placeholder = hint;
   return labelled(name, field);
+}
+
+function checkbox(name: string): { label: HTMLLabelElement; field: HTMLInputElement } {
+  const label = document.createElement('label');
+  label.className = 'box';
+  const field = document.createElement('input');
+  field.type = 'checkbox';
+  label.append(field, ` ${name}`);
+  return { label, field };
 }

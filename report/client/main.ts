@@ -9,12 +9,13 @@ const controls = document.getElementById('controls');
 if (list !== null && controls !== null) {
   const cards = Array.from(list.querySelectorAll<HTMLElement>('.card'));
   const plots = new Map(cards.map((card) => [card, new CardPlots(card)]));
+  let keepAll = false;
   const watch = new IntersectionObserver(
     (entries) => {
       for (const { target, isIntersecting } of entries) {
         const one = plots.get(target as HTMLElement);
         if (isIntersecting) void one?.show();
-        else one?.hide();
+        else if (!keepAll) one?.hide();
       }
     },
     { rootMargin: AHEAD },
@@ -24,7 +25,12 @@ if (list !== null && controls !== null) {
     watch.disconnect();
     for (const card of cards) watch.observe(card);
   };
-  addControls(controls, list, cards, watchAll);
+  const keep = async (all: boolean): Promise<void> => {
+    keepAll = all;
+    if (all) for (const [card, one] of plots) if (!card.hidden) await one.show();
+    watchAll();
+  };
+  addControls(controls, list, cards, watchAll, keep);
 
   const redraw = (): void => {
     for (const one of plots.values()) one.hide();

@@ -14,6 +14,8 @@ const MAIN_HEIGHT = 280;
 const RESIDUAL_HEIGHT = 128;
 /** Residuals beyond this many sigma are drawn at the edge: they are seen, and the rest stays readable. */
 const RESIDUAL_REACH = 6;
+/** Of the height of the data, above and below them: there stand the names of the lines. */
+const ROOM_FOR_LABELS = 0.25;
 const LEFT_AXIS = 62;
 const FONT = '12px system-ui, sans-serif';
 
@@ -169,8 +171,8 @@ function robustRange(arms: readonly Arm[]): [number, number] | null {
   const models = arms.flatMap((arm) => arm.model.filter((value): value is number => value !== null));
   const low = Math.min(at(0.005), ...models);
   const high = Math.max(at(0.995), ...models);
-  const air = 0.12 * (high - low) || 1;
-  return [low - air, high + air];
+  const height = high - low || 1;
+  return [low - ROOM_FOR_LABELS * height, high + ROOM_FOR_LABELS * height];
 }
 
 /** Three digits; powers of ten where needed. */

@@ -7,11 +7,11 @@ export const STYLE = `
 :root{--paper:#faf9f5;--card:#ffffff;--ink:#1c2630;--muted:#55616b;--rule:#d9d6cc;--grid:#e9e6dd;
 --accepted:#2a7f86;--flagged:#d9962b;--unreadable:#5a5560;--galaxy:#c2531a;--quasar:#2458b8;--star:#8a3f86;
 --galaxy-text:#a5430f;--quasar-text:#2458b8;--star-text:#7d3579;
---plot-data:#8b959d;--plot-band:rgba(194,83,26,.24);--plot-best:#c2531a;--plot-runner-up:#2458b8;--plot-mask:rgba(120,110,80,.16);color-scheme:light}
+--plot-data:#8b959d;--plot-band:rgba(0,119,107,.26);--plot-best:#00776b;--plot-runner-up:#9a6400;--plot-mask:rgba(120,110,80,.22);color-scheme:light}
 @media (prefers-color-scheme:dark){@media screen{:root{--paper:#14191e;--card:#1b2229;--ink:#e6e4dd;--muted:#a5afb8;--rule:#343e48;--grid:#29323b;
 --accepted:#4fa9b0;--flagged:#e5ab4a;--unreadable:#8d8795;--galaxy:#ee8a52;--quasar:#7ea6f0;--star:#cf86ca;
 --galaxy-text:#ee8a52;--quasar-text:#8fb2f3;--star-text:#d795d2;
---plot-data:#8793a0;--plot-band:rgba(238,138,82,.26);--plot-best:#ee8a52;--plot-runner-up:#7ea6f0;--plot-mask:rgba(220,205,150,.13);color-scheme:dark}}}
+--plot-data:#8793a0;--plot-band:rgba(69,194,177,.30);--plot-best:#45c2b1;--plot-runner-up:#e6b450;--plot-mask:rgba(220,205,150,.13);color-scheme:dark}}}
 *{box-sizing:border-box}
 body{margin:0 auto;max-width:1240px;padding:28px 24px 60px;background:var(--paper);color:var(--ink);font:15px/1.5 system-ui,"Segoe UI","DejaVu Sans",sans-serif}
 h1{font-size:34px;line-height:1.15;margin:0 0 8px;letter-spacing:-.01em;overflow-wrap:anywhere}
@@ -47,7 +47,7 @@ svg.bar{width:120px;height:10px;display:inline-block}
 .note{color:var(--muted);max-width:62em}
 #controls form{display:flex;flex-wrap:wrap;gap:10px 16px;align-items:end;background:var(--card);border:1px solid var(--rule);border-radius:3px;padding:12px 14px}
 #controls label{display:flex;flex-direction:column;font-size:13px;color:var(--muted);gap:2px}
-#controls label.fold{flex-direction:row;align-items:center;gap:6px;padding-bottom:6px;color:var(--ink)}
+#controls label.box{flex-direction:row;align-items:center;gap:6px;padding-bottom:6px;color:var(--ink)}
 #controls input,#controls select{font:inherit;font-size:14px;color:var(--ink);background:var(--paper);border:1px solid var(--muted);border-radius:3px;padding:4px 6px}
 #controls input[type=text],#controls input[type=number]{width:6.5em}
 #controls p{margin:8px 0;color:var(--muted)}
@@ -77,5 +77,5 @@ code,pre{font:13px/1.4 ui-monospace,"DejaVu Sans Mono",monospace}pre{white-space
 .key input{margin:0 2px 0 0;vertical-align:middle}.hint{color:var(--muted)}
 .folded .body{display:none}.folded .card{margin-bottom:6px;padding:8px 14px;contain-intrinsic-size:auto 90px}
 @media (max-width:900px){.body{grid-template-columns:1fr}}
-@media print{body{max-width:none;padding:0;background:#fff;font-size:11px}.card,.chart,tr{break-inside:avoid}.card{content-visibility:visible}#controls,.hint,noscript{display:none}h2{break-after:avoid}.body{grid-template-columns:2fr 1fr}}
+@media print{body{max-width:none;padding:0;background:#fff;font-size:11px}.card,.chart,tr{break-inside:avoid}.card{content-visibility:visible}#controls,.hint,noscript{display:none}h2{break-after:avoid}.body{grid-template-columns:1fr}.plots{zoom:.82}.facts dl{columns:2}}
 `;
