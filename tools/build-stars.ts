@@ -24,6 +24,9 @@ const RECIPE_FOLDERS = ['physics', 'stars', 'data'];
 /** Coprime to the size of the grid: an interrupted run leaves stars of every kind. */
 const SPREAD_STRIDE = 37;
 
+/** Node 20 does not hand the TypeScript loader on to threads: each registers it and then loads this file. */
+const WORKER_ENTRY = `import('tsx/esm/api').then((tsx) => { tsx.register(); return import('${import.meta.url}'); });`;
+
 interface Job {
   readonly linesFile: string;
   readonly cache: string;
@@ -78,7 +81,7 @@ async function compute(names: string[], threads: number, job: Job): Promise<void
   const total = names.length;
   const run = (): Promise<void> =>
     new Promise((resolve, reject) => {
-      const worker = new Worker(new URL(import.meta.url), { workerData: job });
+      const worker = new Worker(WORKER_ENTRY, { workerData: job, eval: true });
       worker.on('error', reject);
       worker.on('message', (answer: [string, number] | undefined) => {
         if (answer) {

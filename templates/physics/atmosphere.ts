@@ -45,12 +45,20 @@ const LOG_PRESSURES = Float64Array.from({ length: 26 }, (_, i) => -3 + 0.5 * i);
 const CONVECTIVE_BELOW_K = 9000;
 const CONVECTIVE_TAU = 0.7;
 /**
- * Greatest d ln T / d ln P: convection near the surface carries little and lets the gradient rise above the
- * adiabatic one; deeper it approaches it. Choices in the range of mixing-length models.
+ * Greatest d ln T / d ln P in thin gas: convection near the surface carries little there and lets the gradient
+ * rise above the adiabatic one; deeper it approaches it. Choices in the range of mixing-length models.
  */
 const SHALLOW_GRADIENT = 0.5;
 const DEEP_GRADIENT = 0.28;
 const DEEP_TAU = 4;
+/**
+ * In dense gas, as of M dwarfs, convection is efficient up to small optical depths and the dissociation of
+ * hydrogen molecules lowers the adiabatic gradient (e.g. Allard & Hauschildt 1995, ApJ 445, 433). Choices.
+ */
+const DENSE_GRADIENT = 0.15;
+const DENSE_TAU = 0.1;
+const DENSE_LOG_PRESSURE = 5.5;
+const DENSE_LOG_PRESSURE_WIDTH = 0.1;
 
 /** ln of the blanketed Rosseland mass opacity per depth on LOG_PRESSURES. */
 function opacityTable(
@@ -73,13 +81,23 @@ function opacityTable(
   return Array.from(temperature, (_, depth) => ln.subarray(depth * columns, (depth + 1) * columns));
 }
 
+/** Greatest gradient that convection allows at an optical depth and pressure; no limit: Infinity. */
+function greatestGradient(tau: number, pressure: number): number {
+  const dense = 1 / (1 + Math.exp((DENSE_LOG_PRESSURE - Math.log10(pressure)) / DENSE_LOG_PRESSURE_WIDTH));
+  if (tau <= DENSE_TAU) {
+    return Infinity;
+  }
+  if (tau <= CONVECTIVE_TAU) {
+    return dense > 0.5 ? DENSE_GRADIENT / dense : Infinity;
+  }
+  const thin = tau > DEEP_TAU ? DEEP_GRADIENT : SHALLOW_GRADIENT;
+  return dense * Math.min(DENSE_GRADIENT, thin) + (1 - dense) * thin;
+}
+
 /** Lowers temperatures whose gradient convection would not allow; going inwards, in place. */
 function limitGradient(tau: Float64Array, temperature: Float64Array, pressure: Float64Array): void {
   for (let depth = 1; depth < tau.length; depth += 1) {
-    if (tau[depth]! <= CONVECTIVE_TAU) {
-      continue;
-    }
-    const gradient = tau[depth]! > DEEP_TAU ? DEEP_GRADIENT : SHALLOW_GRADIENT;
+    const gradient = greatestGradient(tau[depth]!, pressure[depth]!);
     const limit = temperature[depth - 1]! * (pressure[depth]! / pressure[depth - 1]!) ** gradient;
     temperature[depth] = Math.min(temperature[depth]!, limit);
   }

@@ -17,7 +17,7 @@ import type { HydrogenLine } from './hydrogen-lines.ts';
 import { localContinuum } from './opacity-rows.ts';
 import type { OpacityRows } from './opacity-rows.ts';
 import { boundShare } from './occupation.ts';
-import { normalField, smoothedArea, starkScale, starkShape } from './stark.ts';
+import { normalField, smoothedArea, starkReach, starkScale, starkShape } from './stark.ts';
 
 const HYDROGEN_WEIGHT = 1.008;
 /** Farthest reach of a line, km/s, by lower level; lines of higher members are narrower. Limits the work. */
@@ -101,11 +101,13 @@ function addLineAt(
 
   const centre = (Math.log(lambda) - grid.lnStart) / grid.step;
   const floor = CUT_OFF * localContinuum(rows, depth, Math.round(centre));
-  const starkReach = scale * ((1.5 * strength) / (scale * floor)) ** 0.4;
   const lorentzReach = Math.sqrt((strength * lorentz) / (Math.PI * floor));
   const coreReach = Math.sqrt(CORE_REACH) * doppler;
   const limit = REACH_KM_S[line.lower - 1]! * (line.upper - line.lower < HIGHER_MEMBER ? 1 : HIGHER_REACH);
-  const reach = Math.min(Math.max(starkReach, lorentzReach, coreReach) / lambda, limit / LIGHT_SPEED_KM_S);
+  const reach = Math.min(
+    Math.max(starkReach(strength, scale, floor), lorentzReach, coreReach) / lambda,
+    limit / LIGHT_SPEED_KM_S,
+  );
   const first = Math.max(Math.ceil(centre - reach / grid.step), 0);
   const last = Math.min(Math.floor(centre + reach / grid.step), grid.length - 1);
   const row = rows.depths[depth]!;

@@ -1,4 +1,5 @@
 import type { LogGrid } from '../family.ts';
+import { lineHaze } from './blanketing.ts';
 import { continuumOpacity } from './continuum.ts';
 import type { ContinuumSource } from './continuum.ts';
 
@@ -52,8 +53,11 @@ function fillRow(row: Float32Array, positions: Float64Array, lnOpacity: Float64A
   }
 }
 
-/** The continuous opacity of an atmosphere on a wavelength grid, ready for lines to be added. */
-export function continuumRows(source: ContinuumSource, grid: LogGrid): OpacityRows {
+/**
+ * The continuous opacity of an atmosphere on a wavelength grid, with the haze of faint lines of its metallicity
+ * (dex), ready for lines to be added.
+ */
+export function continuumRows(source: ContinuumSource, metallicity: number, grid: LogGrid): OpacityRows {
   const first = Math.exp(grid.lnStart);
   const last = Math.exp(grid.lnStart + grid.step * (grid.length - 1));
   const nodes = continuumNodes(source, first, last);
@@ -64,7 +68,8 @@ export function continuumRows(source: ContinuumSource, grid: LogGrid): OpacityRo
   for (const [node, wavelength] of nodes.entries()) {
     continuumOpacity(source, wavelength, opacity);
     for (let depth = 0; depth < length; depth += 1) {
-      lnOpacity[depth]![node] = Math.log(Math.max(opacity[depth]!, LEAST_OPACITY));
+      const haze = lineHaze(wavelength, source.gas.temperature[depth]!, metallicity);
+      lnOpacity[depth]![node] = Math.log(Math.max(opacity[depth]! * (1 + haze), LEAST_OPACITY));
     }
   }
   const depths = lnOpacity.map((values) => {
