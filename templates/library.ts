@@ -1,4 +1,5 @@
 import type { Family } from './family.ts';
+import { distantGalaxyFamilies, prepareDistantGalaxies } from './galaxies/distant-families.ts';
 import { galaxyFamilies, prepareGalaxies } from './galaxies/galaxy-families.ts';
 import { populationsFromFile, quasarsFromFile, starsFromFile } from './prepare/file-contents.ts';
 import { sha256 } from './prepare/sha256.ts';
@@ -44,6 +45,7 @@ export function loadFamilyLibrary(files: FamilyFiles): FamilyLibrary {
   const quasars = quasarsFromFile(files.quasars);
   const stars = prepareStars(starsFromFile(files.stars));
   const galaxies = prepareGalaxies(populations);
+  const distant = prepareDistantGalaxies(populations);
   const versions = new Map<number, readonly Family[]>();
   return {
     hash: libraryHash(files),
@@ -56,6 +58,7 @@ export function loadFamilyLibrary(files: FamilyFiles): FamilyLibrary {
       const families = versions.get(step) ?? [
         ...starFamilies(stars, rounded),
         ...galaxyFamilies(galaxies, rounded),
+        ...distantGalaxyFamilies(distant, rounded),
         ...quasarFamilies(quasars, populations, rounded),
       ];
       // Re-inserting moves it to the end: the first key is the one unused for longest.

@@ -8,7 +8,7 @@ import { componentOf, lineComponent, present } from '../prepare/component.ts';
 import { averagePairs, pairedGrid, stepKmS, wavelengthsOf } from '../prepare/log-grid.ts';
 import { principalVectors } from '../prepare/principal-vectors.ts';
 import { neededForMixtures } from '../prepare/prune.ts';
-import { STORED_SIGMA_KM_S } from '../prepare/star-grid.ts';
+import { STORED_SIGMA_KM_S } from '../stars/stored-grid.ts';
 import { toUnitRms } from '../prepare/unit-rows.ts';
 import type { PopulationSet } from './population-set.ts';
 

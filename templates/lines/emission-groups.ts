@@ -1,5 +1,6 @@
 import { starburstAttenuation } from '../dust/starburst.ts';
 import { dustTransmission } from '../dust/transmission.ts';
+import { LIGHT_SPEED_KM_S } from '../physics/constants.ts';
 import { REST_WAVELENGTHS as REST } from './rest-wavelengths.ts';
 
 /** One line of a group: rest wavelength (vacuum Å) and flux (energy) relative to the others. */
@@ -140,4 +141,24 @@ export const SEARCH_GROUPS: readonly EmissionGroup[] = [
       line(REST.sulphurII6731, 0.8 * NITROGEN2_RATIO * 0.45),
     ],
   },
+];
+
+/** Lyα of galaxies is redshifted by scattering, 360 km/s on average (Shapley et al. 2003, ApJ 588, 65). */
+const LYMAN_ALPHA_SHIFT = 1 + 360 / LIGHT_SPEED_KM_S;
+
+/** Ultraviolet lines of distant star-forming galaxies. Lyα first. */
+export const DISTANT_GROUPS: readonly EmissionGroup[] = [
+  {
+    label: 'lyman-alpha',
+    group: 'lyman-alpha',
+    lines: [line(REST.hydrogenLymanAlpha * LYMAN_ALPHA_SHIFT, 1)],
+  },
+  { label: 'carbon4', group: 'carbon4', lines: doublet(REST.carbonIV1548, REST.carbonIV1550, 0.6) },
+  {
+    label: 'helium2-oxygen3',
+    group: 'helium2-oxygen3',
+    lines: [line(REST.heliumII1640, 1), line(REST.oxygenIII1661, 0.4), line(REST.oxygenIII1666, 1)],
+  },
+  { label: 'carbon3', group: 'carbon3', lines: doublet(REST.carbonIII1907, REST.carbonIII1909, 0.7) },
+  { label: 'oxygen2', group: 'oxygen2', lines: doublet(REST.oxygenII3726, REST.oxygenII3729, 1.2) },
 ];

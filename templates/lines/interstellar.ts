@@ -1,5 +1,6 @@
 import type { LogGrid } from '../family.ts';
 import { LIGHT_SPEED_KM_S } from '../physics/constants.ts';
+import { REST_WAVELENGTHS } from './rest-wavelengths.ts';
 
 /** A resonance line of interstellar gas: vacuum Å and equivalent width in the rest frame, Å. */
 interface AbsorptionLine {
@@ -59,4 +60,24 @@ export function interstellarTransmission(grid: LogGrid, strength: number): Float
     }
   }
   return Float32Array.from(depth, (value) => Math.exp(-value));
+}
+
+/** Interstellar Lyα absorption of galaxies without Lyα emission: about 15 Å (Shapley et al. 2003), and its width. */
+const LYMAN_ALPHA_WIDTH = 15;
+const LYMAN_ALPHA_SIGMA_KM_S = 1000;
+
+/**
+ * Light let through around Lyα by the neutral hydrogen of the galaxy itself; a Gaussian in optical depth stands
+ * for the damped profile.
+ *
+ * @param strength 1 = 15 Å equivalent width in the weak-line relation; 0 none
+ */
+export function dampedLymanAlpha(grid: LogGrid, strength: number): Float32Array {
+  const sigma = LYMAN_ALPHA_SIGMA_KM_S / LIGHT_SPEED_KM_S;
+  const rest = REST_WAVELENGTHS.hydrogenLymanAlpha;
+  const central = (strength * LYMAN_ALPHA_WIDTH) / (Math.sqrt(2 * Math.PI) * sigma * rest);
+  const centre = (Math.log(rest) - grid.lnStart) / grid.step;
+  return Float32Array.from({ length: grid.length }, (_, i) =>
+    Math.exp(-central * Math.exp(-0.5 * (((i - centre) * grid.step) / sigma) ** 2)),
+  );
 }

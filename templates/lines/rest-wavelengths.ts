@@ -6,6 +6,8 @@
  */
 export const REST_WAVELENGTHS = {
   hydrogenLymanAlpha: 1215.67,
+  carbonIV1548: 1548.204,
+  carbonIV1550: 1550.781,
   heliumII1640: 1640.42,
   oxygenIII1661: 1660.809,
   oxygenIII1666: 1666.15,

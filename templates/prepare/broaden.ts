@@ -33,17 +33,17 @@ export function gaussianKernel(sigmaPixels: number): Float64Array {
  * A spectrum convolved with a Gaussian of constant velocity width. Beyond its ends the spectrum is taken to
  * go on at its end value.
  *
- * @param flux on a grid uniform in ln wavelength
+ * @param flux on a grid uniform in ln wavelength, at least one pixel
  * @param sigmaPixels standard deviation in pixels of that grid, ≥ 0; 0 copies
  */
-export function broaden(flux: ArrayLike<number>, sigmaPixels: number): Float32Array {
+export function broaden(flux: Float32Array | Float64Array, sigmaPixels: number): Float32Array {
   const kernel = gaussianKernel(sigmaPixels);
   const length = flux.length;
   const reach = kernel.length - 1;
   const padded = new Float64Array(length + 2 * reach);
-  for (let i = 0; i < padded.length; i++) {
-    padded[i] = flux[Math.min(length - 1, Math.max(0, i - reach))]!;
-  }
+  padded.set(flux, reach);
+  padded.fill(padded[reach]!, 0, reach);
+  padded.fill(padded[reach + length - 1]!, reach + length);
   const smooth = new Float32Array(length);
   for (let i = 0; i < length; i++) {
     const centre = i + reach;

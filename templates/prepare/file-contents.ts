@@ -6,7 +6,7 @@ import { POPULATIONS } from '../galaxies/population.ts';
 import { QUASAR_SEARCH_GRID } from '../quasars/grid.ts';
 import type { QuasarSet } from '../quasars/quasar-set.ts';
 import type { StarGroup } from '../stars/parameters.ts';
-import { COMPONENT_STEP } from './log-grid.ts';
+import { STORED_GRID } from '../stars/stored-grid.ts';
 import { type ReadSpectra, readSpectra } from './read-spectra.ts';
 import { encodeSpectra } from './spectra-file.ts';
 import type { StarGrid } from './star-grid.ts';
@@ -30,11 +30,11 @@ function read(label: string, bytes: Uint8Array): ReadSpectra {
 export function starsFromFile(bytes: Uint8Array): StarGrid {
   const label = 'stars.fits';
   const file = read(label, bytes);
-  if (Math.abs(file.grid.step / COMPONENT_STEP - 1) > 1e-9) {
+  if (Math.abs(file.grid.step / STORED_GRID.step - 1) > 1e-9) {
     throw new InputFault(
       'value-not-usable',
       { file: label },
-      `step must be ${COMPONENT_STEP}, got ${file.grid.step}`,
+      `step must be ${STORED_GRID.step}, got ${file.grid.step}`,
     );
   }
   const groups = file.text('group');

@@ -1,28 +1,39 @@
 import type { LogGrid } from '../family.ts';
 import { LIGHT_SPEED_KM_S } from '../physics/constants.ts';
 
-/** Step in ln wavelength of stored spectra and of refit components: 0.5e-4 dex, 34.5 km/s. */
-export const COMPONENT_STEP = Math.LN10 * 0.5e-4;
-
-/** Step in ln wavelength of search vectors: 1e-4 dex, 69 km/s, the usual pixel of a survey at R = 2000. */
-export const SEARCH_STEP = 2 * COMPONENT_STEP;
-
 /** The velocity one step of a grid stands for, km/s. */
 export function stepKmS(grid: LogGrid): number {
   return grid.step * LIGHT_SPEED_KM_S;
 }
 
 /**
- * A grid of components that reaches from one wavelength to at least another.
+ * A grid whose pixels fall on those of another, over a different range.
  *
- * @param firstAngstrom centre of pixel 0, vacuum ångström, > 0
- * @param lastAngstrom wavelength the last pixel's centre reaches, > firstAngstrom
- * @returns step {@link COMPONENT_STEP}; an even number of pixels, so that pairs make search pixels
+ * @param other the grid to line up with
+ * @param shortest ångström the first pixel's centre must not exceed
+ * @param longest ångström the last pixel's centre reaches
+ * @returns same step; starts an even number of pixels away and is even in length, so that pairs line up too
  */
-export function componentGridOver(firstAngstrom: number, lastAngstrom: number): LogGrid {
-  const lnStart = Math.log(firstAngstrom);
-  const pixels = Math.ceil((Math.log(lastAngstrom) - lnStart) / COMPONENT_STEP) + 1;
-  return { lnStart, step: COMPONENT_STEP, length: pixels + (pixels % 2) };
+export function gridThrough(other: LogGrid, shortest: number, longest: number): LogGrid {
+  const offset = 2 * Math.floor(pixelAt(other, shortest) / 2);
+  const length = Math.ceil(pixelAt(other, longest)) - offset + 1;
+  return {
+    lnStart: other.lnStart + offset * other.step,
+    step: other.step,
+    length: length + (length % 2),
+  };
+}
+
+/**
+ * A spectrum laid into another grid of the same step and phase (see {@link gridThrough}); zero where it ends.
+ */
+export function laidInto(target: LogGrid, grid: LogGrid, flux: Float32Array): Float32Array {
+  const offset = Math.round((grid.lnStart - target.lnStart) / target.step);
+  const laid = new Float32Array(target.length);
+  for (let i = Math.max(0, offset); i < Math.min(target.length, offset + flux.length); i++) {
+    laid[i] = flux[i - offset]!;
+  }
+  return laid;
 }
 
 /** The grid of pairs of pixels: twice the step, half the length (an odd last pixel is left out). */

@@ -2,12 +2,14 @@ import { galacticExtinction } from '../dust/galactic.ts';
 import { behindDust } from '../dust/transmission.ts';
 import type { Family } from '../family.ts';
 import type { StarGroup } from '../stars/parameters.ts';
+import { STORED_SIGMA_KM_S } from '../stars/stored-grid.ts';
 import { broaden, missingWidthKmS } from './broaden.ts';
 import { componentOf } from './component.ts';
 import { averagePairs, pairedGrid, stepKmS, wavelengthsOf } from './log-grid.ts';
 import { principalVectors } from './principal-vectors.ts';
 import { neededForMixtures } from './prune.ts';
-import { type StarGrid, type StarModel, STORED_SIGMA_KM_S } from './star-grid.ts';
+import { toUnitRms } from './unit-rows.ts';
+import type { StarGrid, StarModel } from './star-grid.ts';
 
 /** Which models a family takes: groups and a half-open range of temperature, K. */
 interface Membership {
@@ -113,7 +115,7 @@ export function starFamilies({ stars, sets, dust }: PreparedStars, lineSpreadKmS
       grid: pairedGrid(stars.grid),
       componentGrid: stars.grid,
       basis: principalVectors(
-        rows.map((row) => unitMean(averagePairs(row))),
+        rows.map((row) => toUnitRms(averagePairs(row))),
         SEARCH_VECTORS,
       ),
       redshiftMin: -REDSHIFT_LIMIT,
@@ -128,11 +130,7 @@ export function starFamilies({ stars, sets, dust }: PreparedStars, lineSpreadKmS
 }
 
 function product(a: Float32Array, b: Float32Array): Float32Array {
-  return a.map((value, i) => value * b[i]!);
-}
-
-function unitMean(flux: Float32Array): Float32Array {
-  let sum = 0;
-  for (const value of flux) sum += value;
-  return flux.map((value) => (value * flux.length) / sum);
+  const result = new Float32Array(a.length);
+  for (let i = 0; i < a.length; i++) result[i] = a[i]! * b[i]!;
+  return result;
 }

@@ -13,7 +13,7 @@ export interface StarModel {
   readonly metallicity: number;
   /** Surface flux density per unit of `flux`, erg s⁻¹ cm⁻² Å⁻¹. */
   readonly scale: number;
-  /** Flux density per ångström, mean 1, Gaussian width {@link STORED_SIGMA_KM_S}. */
+  /** Flux density per ångström, mean 1, Gaussian width `STORED_SIGMA_KM_S`. */
   readonly flux: Float32Array;
 }
 
@@ -22,6 +22,3 @@ export interface StarGrid {
   readonly grid: LogGrid;
   readonly models: readonly StarModel[];
 }
-
-/** Velocity width (standard deviation) stored spectra already have, km/s. */
-export const STORED_SIGMA_KM_S = 25;

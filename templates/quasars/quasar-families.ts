@@ -16,11 +16,7 @@ const MISMATCH = 0.04;
  * @param lineSpreadKmS Gaussian sigma of the instrument
  */
 export function quasarFamilies(set: QuasarSet, hosts: PopulationSet, lineSpreadKmS: number): Family[] {
-  const componentsAt = quasarComponents(
-    doubled(set.iron, QUASAR_GRID.length),
-    hosts.populations,
-    lineSpreadKmS,
-  );
+  const componentsAt = quasarComponents(doubled(set.iron, QUASAR_GRID.length), hosts, lineSpreadKmS);
   const sigma = lineSpreadKmS / stepKmS(QUASAR_SEARCH_GRID);
   return set.windows.map(({ window, vectors }) => ({
     name: `quasar-${window.from.toFixed(1)}`,
