@@ -7,7 +7,8 @@ export type { ArmLayout, ArraySource, ExposureTable, Layout, TargetColumns } fro
 export { SPEED_OF_LIGHT_KM_S } from './light.ts';
 export { openInput } from './open-input.ts';
 export type { OpenedInput } from './open-input.ts';
-export { FEWEST_USABLE_PIXELS, readSpectra } from './read-spectra.ts';
+export { FEWEST_USABLE_PIXELS, readSpectra, readTargets } from './read-spectra.ts';
 export { recogniseLayout } from './recognise-layout.ts';
 export type { Arm, Frame, NoiseSource, Role, Site, Spectrum } from './spectrum.ts';
+export type { TargetRow } from './target-row.ts';
 export { airToVacuum, vacuumToAir } from './wavelength/air-vacuum.ts';

@@ -8,6 +8,7 @@ import type { Observation } from './observation.ts';
 import type { OpenedInput } from './open-input.ts';
 import type { Spectrum } from './spectrum.ts';
 import { targetRowOf } from './target-row.ts';
+import type { TargetRow } from './target-row.ts';
 
 /** A redshift from fewer pixels than this is a guess about nothing: not even one line and its continuum fit. */
 export const FEWEST_USABLE_PIXELS = 10;
@@ -29,9 +30,7 @@ export function readSpectra(
   first: number,
   count: number,
 ): (Spectrum | InputFault)[] {
-  if (first < 0 || count < 0 || first + count > layout.rowCount) {
-    throw new RangeError(`rows ${first}..${first + count} must lie in 0..${layout.rowCount}`);
-  }
+  checkRows(layout, first, count);
   const observation = observationOf(input.file, layout);
   return Array.from({ length: count }, (_, i) => {
     try {
@@ -107,4 +106,21 @@ function checkPixels(built: readonly BuiltArm[], most: number, place: FaultPlace
     const detail = `at least ${FEWEST_USABLE_PIXELS} pixels must be usable, got ${usable}`;
     throw new InputFault('too-few-pixels', place, detail);
   }
+}
+
+/**
+ * What the file says each spectrum is of, without reading a pixel: for planning, and for naming spectra that turn out
+ * to be unreadable.
+ *
+ * @returns one entry per row of `first .. first+count-1`; role is null where the file does not say
+ * @throws RangeError when rows outside the layout are asked for
+ */
+export function readTargets(input: OpenedInput, layout: Layout, first: number, count: number): TargetRow[] {
+  checkRows(layout, first, count);
+  return Array.from({ length: count }, (_, i) => targetRowOf(input.file, layout, first + i));
+}
+
+function checkRows(layout: Layout, first: number, count: number): void {
+  if (first >= 0 && count >= 0 && first + count <= layout.rowCount) return;
+  throw new RangeError(`rows ${first}..${first + count} must lie in 0..${layout.rowCount}`);
 }

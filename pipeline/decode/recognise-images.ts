@@ -82,7 +82,8 @@ function fewRowsRecognition(
   if (found === null) return null;
   const axis = found.wavelength === null ? axisOf(file, image) : null;
   const medium = chooseMedium(file, image.index, [], axis?.medium ?? null);
-  const missing = found.spread === null ? ['no row explains the scatter: noise will be estimated'] : [];
+  const missing = ['no line spread'];
+  if (found.spread === null) missing.push('no row explains the scatter: noise will be estimated');
   return {
     form: 'image-one-spectrum',
     arms: [{ ...armOfFewRows(image, found, medium.medium), fluxPer: fluxPerOf(bunit(image)) }],
