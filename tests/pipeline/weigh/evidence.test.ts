@@ -81,6 +81,10 @@ describe('noiseInflation()', () => {
     expect(noiseInflation([0.25, 0, 0])).toBeCloseTo(1.5, 12);
   });
 
+  it('never goes above two: an absorption forest is structure, not noise', () => {
+    expect(noiseInflation([0.63, 0.49, 0.49, 0.36])).toBe(2);
+  });
+
   it('never goes below one: noise is never called better than stated', () => {
     expect(noiseInflation([-0.3, -0.1])).toBe(1);
   });
