@@ -27,7 +27,7 @@ const KEPT_CHUNKS = 64;
  * weights and full cover this is the c of Tonry & Davis (1979).
  *
  * @param lowestLag template pixel − data pixel at output place 0
- * @param leastCovered part of the weight below which c is 0
+ * @param leastCovered part of the weight below which c is NaN
  * @returns per row, values between −1 and 1, lowest lag first
  */
 export function correlateFamily(
@@ -120,7 +120,7 @@ function normalise(
 ): Float64Array {
   const dataLength = sums.weight.length - 1;
   const total = sums.weight[dataLength]!;
-  const out = new Float64Array(layout.lags);
+  const out = new Float64Array(layout.lags).fill(NaN);
   for (let t = 0; t < layout.lags; t++) {
     const lag = lowestLag + t;
     const first = Math.min(Math.max(0, -lag), dataLength);

@@ -11,6 +11,8 @@ import type { MatchWorkspace } from './workspace.ts';
 
 /** Lags beyond the family's range that the noise of the correlation is measured on. */
 const MARGIN = 512;
+/** With fewer lags on each side the noise of the correlation, hence r, is not known. */
+const LEAST_REACH = 100;
 /** A peak is looked for this many pixels around a given redshift: the fit and the correlation differ by noise. */
 const PEAK_REACH = 3;
 
@@ -20,7 +22,7 @@ export interface CorrelationCurve {
   /** ln(1+z) of entry 0. */
   readonly lnStart: number;
   readonly step: number;
-  /** −1 .. 1; 0 where the family covers too little. */
+  /** −1 .. 1; NaN where the family covers too little. */
   readonly values: Float64Array;
   /** Entries within the family's redshift range; the others only serve the noise. */
   readonly first: number;
@@ -114,17 +116,19 @@ export function highestPeaks(
  * Height and r of the correlation at a redshift: of the highest point within 3 pixels.
  *
  * @param curves of one family
- * @returns null when the redshift is outside every curve
+ * @returns null when the redshift is outside every curve or too little is covered; r is NaN when fewer than 100
+ *   lags on each side show the noise of the correlation
  */
 export function correlationAt(curves: readonly CorrelationCurve[], redshift: number): CorrelationPeak | null {
   let best: CorrelationPeak | null = null;
   for (const curve of curves) {
     const place = Math.round((Math.log1p(redshift) - curve.lnStart) / curve.step);
     if (!(place >= curve.first - PEAK_REACH && place < curve.end + PEAK_REACH)) continue;
-    let highest = place;
-    for (let i = place - PEAK_REACH; i <= place + PEAK_REACH; i++) {
-      if (curve.values[i]! > curve.values[highest]!) highest = i;
+    let highest = -1;
+    for (let i = Math.max(0, place - PEAK_REACH); i <= place + PEAK_REACH; i++) {
+      if (Number.isFinite(curve.values[i]) && !(curve.values[i]! <= curve.values[highest]!)) highest = i;
     }
+    if (highest < 0) continue;
     if (best === null || curve.values[highest]! > best.height) best = peakAt(curve, highest);
   }
   return best;
@@ -132,7 +136,9 @@ export function correlationAt(curves: readonly CorrelationCurve[], redshift: num
 
 function peakAt(curve: CorrelationCurve, place: number): CorrelationPeak {
   const { values, lnStart, step, family } = curve;
-  const reach = Math.min(MARGIN, place, values.length - 1 - place);
+  let reach = 0;
+  while (reach < MARGIN && Number.isFinite(values[place - reach - 1]! + values[place + reach + 1]!)) reach++;
   const statistics = peakStatistics((i) => values[i]!, place, reach);
-  return { ...statistics, family, redshift: Math.expm1(lnStart + (place + statistics.offset) * step) };
+  const r = reach < LEAST_REACH ? NaN : statistics.r;
+  return { ...statistics, r, family, redshift: Math.expm1(lnStart + (place + statistics.offset) * step) };
 }

@@ -83,7 +83,7 @@ export function matchFamilies(
   });
   return {
     families: matches,
-    candidates: candidatesOf(matches, grid.step),
+    candidates: candidatesOf(matches, grid.step, options),
     polynomialChiSquare: data.polynomialChiSquare,
     polynomialTerms: data.polynomialTerms,
     pixels: data.pixels,
@@ -157,20 +157,22 @@ function matchFamily(
  * All minima and the clear correlation peaks in one list, each redshift of a refit set once: families of a set
  * share their components.
  */
-function candidatesOf(matches: readonly FamilyMatch[], step: number): Candidate[] {
+function candidatesOf(matches: readonly FamilyMatch[], step: number, options: MatchOptions): Candidate[] {
   const all = matches.flatMap((match) => [
     ...match.minima.map((minimum) => candidateAt(match, minimum.redshift, 'chi-square', minimum)),
     ...match.peaks
       .filter((peak) => peak.r >= LEAST_R)
-      .map((peak) => candidateAt(match, peak.redshift, 'correlation')),
+      .map((peak) => candidateAt(match, peak.redshift, 'correlation'))
+      .filter((candidate) => Number.isFinite(candidate.chiSquare)),
   ]);
   all.sort((a, b) => a.chiSquare - b.chiSquare);
   const kept: Candidate[] = [];
   for (const candidate of all) {
-    const twin = kept.some(
-      (other) =>
-        other.family.refitSet === candidate.family.refitSet &&
-        Math.abs(Math.log1p(other.redshift) - Math.log1p(candidate.redshift)) < TWIN_STEPS * step,
+    const { refitSet, kind } = candidate.family;
+    const companions = kept.filter((other) => other.family.refitSet === refitSet);
+    if (companions.length >= options.candidatesPerRefitSet[kind]) continue;
+    const twin = companions.some(
+      (other) => Math.abs(Math.log1p(other.redshift) - Math.log1p(candidate.redshift)) < TWIN_STEPS * step,
     );
     if (!twin) kept.push(candidate);
   }

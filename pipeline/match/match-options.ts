@@ -10,6 +10,8 @@ export interface MatchOptions {
   readonly leastCovered: number;
   /** Deepest separate minima kept per family. */
   readonly minimaPerFamily: Readonly<Record<Kind, number>>;
+  /** Most candidates kept per refit set: several families may share one. */
+  readonly candidatesPerRefitSet: Readonly<Record<Kind, number>>;
   /** Minima closer than this are one, km/s. */
   readonly separationKmS: Readonly<Record<Kind, number>>;
   /** Best peaks of the cross-correlation kept per family, beside the minima. */
@@ -22,6 +24,7 @@ export const DEFAULT_MATCH_OPTIONS: MatchOptions = {
   polynomialOrder: 3,
   leastCovered: 0.3,
   minimaPerFamily: { star: 2, galaxy: 12, quasar: 4 },
+  candidatesPerRefitSet: { star: 4, galaxy: 16, quasar: 24 },
   // Three expected errors of a faint object of the kind; a star's rivals live within 1,000 km/s.
   separationKmS: { star: 150, galaxy: 600, quasar: 1500 },
   correlationPeaks: 2,

@@ -1,5 +1,7 @@
 /** Ridge on the normal matrix, relative to its mean diagonal: rows that are nearly the same stay harmless. */
 const RIDGE = 1e-9;
+/** Rounding of a correlation by Fourier transforms, relative to its largest value, times 10^3. */
+const ROUNDING = 1e-12;
 /** Lags worked on together: their entries of one elimination step stay in the nearest cache. */
 const BLOCK = 256;
 
@@ -18,15 +20,22 @@ export interface NormalEntries {
  * bᵀ (A + ridge)⁻¹ b at lags first .. end−1: what the family explains, by Gaussian elimination on the lower
  * triangle, a block of lags at a time. Overwrites the entries at these lags.
  *
+ * @param floor from `pivotFloor`
  * @param into receives the result at the same places
  */
-export function solveExplained(entries: NormalEntries, first: number, end: number, into: Float64Array): void {
+export function solveExplained(
+  entries: NormalEntries,
+  first: number,
+  end: number,
+  floor: number,
+  into: Float64Array,
+): void {
   const { size, gram, right } = entries;
   const factor = new Float64Array(BLOCK);
   const inverse = new Float64Array(BLOCK);
   for (let from = first; from < end; from += BLOCK) {
     const to = Math.min(from + BLOCK, end);
-    addRidge(entries, from, to, factor);
+    addRidge(entries, from, to, floor, factor);
     into.fill(0, from, to);
     for (let p = 0; p < size; p++) {
       const pivot = gram[p * size + p]!;
@@ -49,7 +58,29 @@ export function solveExplained(entries: NormalEntries, first: number, end: numbe
   }
 }
 
-function addRidge({ size, gram }: NormalEntries, from: number, to: number, trace: Float64Array): void {
+/**
+ * What rounding leaves in a diagonal entry, times 10^3: where a family is all but empty (a quasar's spectrum
+ * below the Lyman limit) its matrix is rounding only, and this ridge keeps it from explaining anything.
+ *
+ * @param entries before anything is eliminated
+ */
+export function pivotFloor({ size, gram }: NormalEntries, lags: number): number {
+  let largest = 0;
+  for (let t = 0; t < lags; t++) {
+    let trace = 0;
+    for (let j = 0; j < size; j++) trace += gram[j * size + j]![t]!;
+    largest = Math.max(largest, trace);
+  }
+  return (ROUNDING * largest) / size;
+}
+
+function addRidge(
+  { size, gram }: NormalEntries,
+  from: number,
+  to: number,
+  floor: number,
+  trace: Float64Array,
+): void {
   trace.fill(0);
   for (let j = 0; j < size; j++) {
     const diagonal = gram[j * size + j]!;
@@ -57,7 +88,7 @@ function addRidge({ size, gram }: NormalEntries, from: number, to: number, trace
   }
   for (let j = 0; j < size; j++) {
     const diagonal = gram[j * size + j]!;
-    for (let t = from; t < to; t++) diagonal[t] = diagonal[t]! + (RIDGE / size) * trace[t - from]!;
+    for (let t = from; t < to; t++) diagonal[t] = diagonal[t]! + (RIDGE / size) * trace[t - from]! + floor;
   }
 }
 

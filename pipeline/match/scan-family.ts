@@ -3,8 +3,8 @@ import { correlatePacked } from './correlate-packed.ts';
 import type { VectorTransform } from './data-transforms.ts';
 import { familyTransforms } from './family-transforms.ts';
 import type { LagLayout } from './lag-layout.ts';
-import { eliminateOrthonormal, type NormalEntries, solveExplained } from './normal-entries.ts';
-import { eliminateCovered } from './partial-cover.ts';
+import { eliminateOrthonormal, type NormalEntries, pivotFloor, solveExplained } from './normal-entries.ts';
+import { partialElimination } from './partial-cover.ts';
 import type { SearchData } from './search-data.ts';
 import { type MatchWorkspace, scratch, zeroed } from './workspace.ts';
 
@@ -47,23 +47,21 @@ export function scanFamily(
   const covered = new Float64Array(layout.lags);
   const inside = coverOf(data, family.grid.length, lowestLag, layout.lags);
   const { wholeFirst, wholeEnd } = inside;
+  const floor = pivotFloor(entries, layout.lags);
   eliminateOrthonormal(entries, wholeFirst, wholeEnd);
-  solveExplained(entries, wholeFirst, wholeEnd, chiSquare);
-  for (let t = wholeFirst; t < wholeEnd; t++) {
-    covered[t] = 1;
-    chiSquare[t] = data.polynomialChiSquare - chiSquare[t]!;
-  }
+  const polynomials = new Float64Array(layout.lags).fill(data.polynomialChiSquare);
+  covered.fill(1, wholeFirst, wholeEnd);
+  const eliminate = partialElimination(entries, data);
   for (let t = 0; t < layout.lags; t++) {
-    if (t >= wholeFirst && t < wholeEnd) continue;
+    if (t === wholeFirst) t = wholeEnd;
+    if (t >= layout.lags) break;
     const first = inside.firstPixel(t);
     const end = inside.endPixel(t);
     covered[t] = (data.weightSums[end]! - data.weightSums[first]!) / data.weightSums[data.length]!;
-    chiSquare[t] = NaN;
-    if (covered[t]! < leastCovered) continue;
-    const polynomials = eliminateCovered(entries, data, t, first, end);
-    solveExplained(entries, t, t + 1, chiSquare);
-    chiSquare[t] = polynomials - chiSquare[t]!;
+    polynomials[t] = covered[t]! < leastCovered ? NaN : eliminate(t, first, end);
   }
+  solveExplained(entries, 0, layout.lags, floor, chiSquare);
+  for (let t = 0; t < layout.lags; t++) chiSquare[t] = polynomials[t]! - chiSquare[t]!;
   return { chiSquare, covered };
 }
 
