@@ -1,5 +1,6 @@
 import { InputFault } from '../../errors.ts';
 import type { ByteSource } from '../byte-source.ts';
+import { openAsciiTable } from './ascii-table.ts';
 import { openBinaryTable } from './binary-table.ts';
 import { CARD_BYTES, paddedLength } from './blocks.ts';
 import { beginsHdu } from './card.ts';
@@ -95,6 +96,7 @@ function classify(header: ParsedHeader, unit: DataUnit, range: DataRange): Hdu {
       if (header.get('ZIMAGE') === true) return other('fits-compressed-image: tile-compressed image');
       return openBinaryTable(header, unit, range, name);
     }
+    if (extension === 'TABLE') return openAsciiTable(header, unit, range, name);
     if (extension !== 'IMAGE') return other(`fits-unsupported: extension of type '${extension}'`);
     if (unit.randomGroups) return other('fits-unsupported: random groups');
     if (unit.parameterCount !== 0 || unit.groupCount !== 1) {
