@@ -61,6 +61,8 @@ function flaggedPixels(mask: Float64Array, hasWeight: Uint8Array, notes: string[
       if (rest % 2 === 1) setCount[bit]! += 1;
     }
   });
+  // A mask of zeros and ones is a plain flag: it says what it says, however much it covers.
+  if (bits.every((value) => value <= 1)) return Uint8Array.from(bits);
   let ignored = 0;
   setCount.forEach((count, bit) => {
     if (weighty === 0 || count <= WHOLE_SPECTRUM_SHARE * weighty) return;

@@ -1,3 +1,5 @@
+import { median } from '../core/quantile.ts';
+import { estimateInverseVariance } from './estimate-noise.ts';
 import type { ImageHdu } from './fits/model.ts';
 import type { ArmLayout, SpreadMeaning } from './layout.ts';
 import { imageArray } from './recognition.ts';
@@ -9,6 +11,9 @@ import type { WavelengthUnit } from './wavelength/wavelength-unit.ts';
 export const MOST_ROWS_OF_ONE_SPECTRUM = 12;
 /** Bit masks have few different values; even a noisy one stays below this. */
 const MOST_MASK_VALUES = 64;
+
+/** Real errors scatter at least this much less, for their size, than the flux they belong to. */
+const SMOOTHER_BY = 3;
 
 /** What the rows of an image that holds one spectrum are. */
 export interface FewRows {
@@ -53,7 +58,8 @@ export function fewRowsOf(image: ImageHdu): FewRows | null {
     .filter((entry) => entry.reading !== null)
     .sort((a, b) => a.reading!.mismatch - b.reading!.mismatch);
   const best = readings[0];
-  if (wavelength === null && masks.length === 0 && best === undefined) return null;
+  const isTold = wavelength !== null || masks.length > 0;
+  if (!isTold && (best === undefined || !isSmoother(rows[best.row]!, rows[flux]!))) return null;
   const parts = [
     `row ${flux} is flux`,
     best === undefined ? '' : `row ${best.row} its ${best.reading!.meaning} (it explains the scatter)`,
@@ -90,7 +96,7 @@ export function armOfFewRows(image: ImageHdu, found: FewRows, medium: ArmLayout[
   };
 }
 
-/** Whole numbers, and few different ones. */
+/** Whole numbers, few different ones, mostly 0 (a constant row of another number may be a weight). */
 function looksLikeMask(values: Float64Array): boolean {
   const counts = new Map<number, number>();
   for (const value of values) {
@@ -98,5 +104,17 @@ function looksLikeMask(values: Float64Array): boolean {
     counts.set(value, (counts.get(value) ?? 0) + 1);
     if (counts.size > MOST_MASK_VALUES) return false;
   }
-  return true;
+  return 2 * (counts.get(0) ?? 0) > values.length;
+}
+
+/** Whether a row scatters far less, for its size, than the flux: errors do, the next spectrum of a stack does not. */
+function isSmoother(row: Float64Array, flux: Float64Array): boolean {
+  return SMOOTHER_BY * relativeScatter(row) < relativeScatter(flux);
+}
+
+/** Typical scatter of neighbouring pixels over the typical size; 0 for a constant. */
+function relativeScatter(values: Float64Array): number {
+  const all = new Uint8Array(values.length).fill(1);
+  const weight = median(estimateInverseVariance(values, all));
+  return weight > 0 ? 1 / (Math.sqrt(weight) * median(values.map(Math.abs))) : 0;
 }

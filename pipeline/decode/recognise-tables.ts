@@ -99,13 +99,16 @@ function pickArm(
       .sort((a, b) => a.column.name.length - b.column.name.length)[0];
   const flux = plainest('flux', null);
   if (flux === undefined) return null;
-  const wave = plainest('wavelength', flux.arm) ?? plainest('wavelength', null);
+  // With one flux its companions need not share its word (`spectrum` beside `error`, or names told by UCD alone).
+  const isOnly = candidates.every(({ kind, arm }) => kind !== 'flux' || arm === flux.arm);
+  const companion = (kind: ArrayKind): KnownColumn | undefined =>
+    plainest(kind, flux.arm) ?? (isOnly ? plainest(kind, null) : undefined);
+  const wave = companion('wavelength') ?? plainest('wavelength', null);
   if (wave === undefined || !isAxis(wave)) return null;
-  const spread =
-    plainest('inverse-variance', flux.arm) ?? plainest('error', flux.arm) ?? plainest('variance', flux.arm);
+  const spread = companion('inverse-variance') ?? companion('error') ?? companion('variance');
   const rest = candidates.filter(({ kind }) => kind === 'quality');
   const goods = rest.length > 0 ? [] : candidates.filter(({ kind }) => kind === 'good');
-  const once = [wave, spread, plainest('sky', null), plainest('line-spread', null)];
+  const once = [wave, spread, companion('sky'), companion('line-spread')];
   return [flux, ...once.filter((column) => column !== undefined), ...rest, ...goods];
 }
 

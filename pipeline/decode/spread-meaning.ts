@@ -5,6 +5,11 @@ import type { SpreadMeaning } from './layout.ts';
 /** Stated errors are right within this factor on every real spectrum seen; beyond it an array is something else. */
 const LARGEST_FACTOR = 5;
 
+/** The scatter of a spectrum tells its size no better than this; closer readings (values near 1) are a tie. */
+const TIE_FACTOR = 1.5;
+/** Correlation, in logarithms, below which an array falls where the scatter rises. */
+const FALLING_CORRELATION = -0.3;
+
 /** How well an array explains the scatter of a flux. */
 export interface SpreadReading {
   readonly meaning: SpreadMeaning;
@@ -14,6 +19,9 @@ export interface SpreadReading {
 
 /**
  * Decide by the numbers whether an array is the error, the variance or the inverse variance of a flux.
+ *
+ * Where the values lie so near 1 that all readings fit, an array that falls where the scatter rises is an inverse
+ * variance, and any other an error, which is the commonest.
  *
  * @param flux any unit
  * @param candidate same length
@@ -34,6 +42,28 @@ export function spreadMeaningByNumbers(flux: Float64Array, candidate: Float64Arr
     { meaning: 'variance', mismatch: Math.abs(logRatio(Math.sqrt)) },
     { meaning: 'inverse-variance', mismatch: Math.abs(logRatio((value) => 1 / Math.sqrt(value))) },
   ];
-  const best = readings.reduce((a, b) => (b.mismatch < a.mismatch ? b : a));
+  const nearest = readings.reduce((a, b) => (b.mismatch < a.mismatch ? b : a));
+  const [error] = readings;
+  const isTie = error!.mismatch - nearest.mismatch < Math.log10(TIE_FACTOR);
+  const best = isTie && !fallsWithScatter(candidate, seen) ? error! : nearest;
   return best.mismatch < Math.log10(LARGEST_FACTOR) ? best : null;
+}
+
+/** Whether the logarithms of the candidate and of the scatter seen run against each other. */
+function fallsWithScatter(candidate: Float64Array, seen: Float64Array): boolean {
+  const pairs: [number, number][] = [];
+  seen.forEach((weight, i) => {
+    if (weight > 0 && candidate[i]! > 0) pairs.push([Math.log(candidate[i]!), -0.5 * Math.log(weight)]);
+  });
+  const mean = (side: 0 | 1): number => pairs.reduce((sum, pair) => sum + pair[side], 0) / pairs.length;
+  const [meanCandidate, meanScatter] = [mean(0), mean(1)];
+  let both = 0;
+  let ofCandidate = 0;
+  let ofScatter = 0;
+  for (const [a, b] of pairs) {
+    both += (a - meanCandidate) * (b - meanScatter);
+    ofCandidate += (a - meanCandidate) ** 2;
+    ofScatter += (b - meanScatter) ** 2;
+  }
+  return both < FALLING_CORRELATION * Math.sqrt(ofCandidate * ofScatter);
 }
