@@ -5,13 +5,27 @@ import { SEARCH_GROUPS, STRONG_GROUPS, WEAK_GROUPS } from '../lines/emission-gro
 import { interstellarTransmission } from '../lines/interstellar.ts';
 import { broaden, missingWidthKmS } from '../prepare/broaden.ts';
 import { componentOf, lineComponent, present } from '../prepare/component.ts';
-import { averagePairs, pairedGrid, stepKmS, wavelengthsOf } from '../prepare/log-grid.ts';
+import {
+  averagePairs,
+  gridThrough,
+  laidInto,
+  pairedGrid,
+  stepKmS,
+  wavelengthsOf,
+} from '../prepare/log-grid.ts';
 import { principalVectors } from '../prepare/principal-vectors.ts';
 import { neededForMixtures } from '../prepare/prune.ts';
 import { STORED_SIGMA_KM_S } from '../stars/stored-grid.ts';
 import { toUnitRms } from '../prepare/unit-rows.ts';
+import { withFarUltraviolet } from './far-ultraviolet.ts';
 import type { PopulationSet } from './population-set.ts';
 
+/**
+ * Rest wavelengths of the families, ångström: what optical spectra show from the lowest to the highest redshift
+ * searched. Shortward of the stored light the ultraviolet slope goes on, so that no step is fitted there.
+ */
+const SHORTEST = 1280;
+const LONGEST = 10_590;
 /** Attenuation by dust inside the galaxy, A(V) magnitudes. */
 const ATTENUATIONS = [0, 0.5, 1.2];
 /** Velocity dispersion of the stars, km/s: a middling galaxy; the refit does not fit it. */
@@ -46,13 +60,18 @@ export interface PreparedGalaxies {
 }
 
 /** Puts gas and dust in front of the populations and finds which of them the refit needs. */
-export function prepareGalaxies({ grid, populations }: PopulationSet): PreparedGalaxies {
+export function prepareGalaxies({ grid: stored, populations }: PopulationSet): PreparedGalaxies {
+  const grid = gridThrough(stored, SHORTEST, LONGEST);
   const wavelengths = wavelengthsOf(grid);
   const gas = interstellarTransmission(grid, 1);
-  const withGas = populations
+  const bare = populations.map(({ name, age, flux }) => ({
+    label: name,
+    age,
+    flux: withFarUltraviolet(grid, laidInto(grid, stored, flux), Math.exp(stored.lnStart)),
+  }));
+  const withGas = bare
     .filter(({ age }) => age < OLDEST_WITH_GAS)
-    .map(({ name, flux }) => ({ label: `${name} gas`, flux: flux.map((value, i) => value * gas[i]!) }));
-  const bare = populations.map(({ name, flux }) => ({ label: name, flux }));
+    .map(({ label, flux }) => ({ label: `${label} gas`, flux: flux.map((value, i) => value * gas[i]!) }));
   const starlight = [...bare, ...withGas].flatMap(({ label, flux }) =>
     ATTENUATIONS.map((amount) => ({
       label: `${label} av${amount}`,

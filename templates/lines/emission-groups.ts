@@ -36,7 +36,7 @@ const BALMER_CASE_B: readonly GroupLine[] = [
 
 /**
  * Attenuation of the dusty Balmer group, A(V) magnitudes. Non-negative mixtures with the dust-free group span
- * Hα/Hβ from 2.86 to 5.3, the range seen in star-forming galaxies (common practice, no source).
+ * Hα/Hβ from 2.86 to 5.7, the range seen in star-forming galaxies (common practice, no source).
  */
 const DUSTY_BALMER_EXTINCTION = 2.4;
 

@@ -1,4 +1,5 @@
 import type { Component, LogGrid } from '../family.ts';
+import { withFarUltraviolet } from '../galaxies/far-ultraviolet.ts';
 import type { PopulationSet } from '../galaxies/population-set.ts';
 import { absorbedWithRedshift } from '../intergalactic/absorbed-components.ts';
 import { STRONG_GROUPS, WEAK_GROUPS } from '../lines/emission-groups.ts';
@@ -106,7 +107,8 @@ function hostComponents(hosts: PopulationSet, lineSpreadKmS: number): Component[
   return HOSTS.map((name) => {
     const host = hosts.populations.find((population) => population.name === name);
     if (!host) throw new RangeError(`populations must hold the host ${name}, got none of that name`);
-    const flux = laidInto(QUASAR_GRID, hosts.grid, broaden(host.flux, sigma));
+    const stored = laidInto(QUASAR_GRID, hosts.grid, broaden(host.flux, sigma));
+    const flux = withFarUltraviolet(QUASAR_GRID, stored, Math.exp(hosts.grid.lnStart));
     return componentOf(`host ${name}`, 'host', '', toUnitPeak(flux));
   });
 }
