@@ -15,7 +15,7 @@ const fineStructureShift = (n: number): number => (FINE_STRUCTURE ** 2 * (1.25 -
 
 /**
  * Vacuum wavelength (angstrom) of the transition lower-upper: Rydberg's formula with the mean fine-structure
- * shift of both levels (Sommerfeld 1916, averaged with statistical weights). Within 0.1 km/s of the
+ * shift of both levels (Sommerfeld 1916, averaged with statistical weights). Within 0.3 km/s (Lyman alpha 0.8) of the
  * strength-weighted centroid; Rydberg's formula alone is 2-4 km/s too red.
  */
 export function hydrogenWavelength(lower: number, upper: number): number {

@@ -10,7 +10,7 @@ export function coolSurfaceTerm(tau: number): number {
   return 1.39 - 0.815 * Math.exp(-2.54 * tau) - 0.025 * Math.exp(-30 * tau);
 }
 
-/** Hopf's q(tau) of the grey radiative atmosphere: a two-term fit, within 1 per cent of the exact function. */
+/** Hopf's q(tau) of the grey radiative atmosphere: a two-term fit, within 2 per cent of the exact function. */
 export function greySurfaceTerm(tau: number): number {
   return 0.7104 - 0.1331 * Math.exp(-3.4488 * tau);
 }

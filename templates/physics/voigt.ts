@@ -5,7 +5,7 @@ import { SQRT_PI } from './constants.ts';
  * - far from the centre: the Lorentz wing with its first correction;
  * - small damping: the series H0 + a H1 + a^2 H2 (Harris 1948, ApJ 108, 112) with tabulated terms;
  * - else: the rational approximation of Hui, Armstrong & Wray 1978 (JQSRT 19, 509), region p = 6.
- * Each piece is within 1e-3 of the exact value relative to it (1e-4 where it matters to line cores).
+ * Within 4e-3 of the exact value relative to it where the pieces meet, elsewhere within 1e-3.
  */
 
 /** Beyond this |u| the wing formula is used. */
