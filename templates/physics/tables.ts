@@ -1,14 +1,13 @@
 import type { AtmosphereTables } from './atmosphere.ts';
 import { parseElements } from './elements.ts';
 import type { AbsorberTables } from './line-absorbers.ts';
-import { parseHeliumLines, toLineList } from './line-list.ts';
+import { parseAtomicLines, parseHeliumLines, toLineList } from './line-list.ts';
 import type { Line, LineList } from './line-list.ts';
 import { generateBandLines, parseBandSystems } from './molecular-bands.ts';
 import { parseMolecularStates } from './molecular-states.ts';
 import { parseMoleculeEquilibrium } from './molecule-equilibrium.ts';
 import { parsePartitionFunctions } from './partition-functions.ts';
 import { parseAtomicEdges } from './photo-ionisation.ts';
-import { parseAtomicLines } from './line-list.ts';
 
 /** Names of the bundled tables, files of templates/data. */
 export const TABLE_FILES = {
@@ -38,7 +37,7 @@ export function parseTables(texts: TableTexts): PhysicsTables {
   };
 }
 
-/** The lines of a star: all for cool ones, without molecules for hot ones. */
+/** The lines of a star. */
 export interface StarLines {
   readonly atoms: LineList;
   readonly molecules: LineList;
