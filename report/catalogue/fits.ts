@@ -10,7 +10,7 @@ import type { Column } from './columns.ts';
  * TUCDn and meanings in TCOMMn (common conventions outside the standard).
  *
  * FITS text is printable ASCII only. Whatever else a text from outside holds is written as JavaScript escapes,
- * `\u00e9`, and a backslash as two, so that no two names become one. Every row of a FITS column is as wide as its
+ * `\u00e9`, a backslash as two, and a last blank, which FITS would drop, as `\u0020`, so that no two names become one. Every row of a FITS column is as wide as its
  * longest text: texts other than identities are cut, or one absurd remark would swell the file a thousandfold. The
  * other three formats carry them whole.
  *
@@ -83,16 +83,19 @@ const LONGEST_TEXT = 400;
 /**
  * Text in printable ASCII from which the original can be had back; astral characters become two escapes.
  *
- * @param longest characters of the result at most; the cut never falls inside an escape
+ * @param longest characters of the result at most, not counting the escape of a last blank; the cut never falls inside an escape
  */
 export function escapedAscii(text: string, longest: number): string {
   // Nearly every text is plain: a night has a hundred thousand of them.
-  if (PLAIN.test(text)) return text.slice(0, longest);
+  if (PLAIN.test(text)) return text.slice(0, longest).replace(LAST_BLANK, BLANK_ESCAPE);
   const pieces = Array.from({ length: text.length }, (_, i) => escapedUnit(text, i));
   let length = 0;
   const end = pieces.findIndex((piece) => (length += piece.length) > longest);
-  return (end === -1 ? pieces : pieces.slice(0, end)).join('');
+  return (end === -1 ? pieces : pieces.slice(0, end)).join('').replace(LAST_BLANK, BLANK_ESCAPE);
 }
+
+const LAST_BLANK = / $/;
+const BLANK_ESCAPE = '\\u0020';
 
 function escapedUnit(text: string, index: number): string {
   const unit = text.charAt(index);

@@ -39,7 +39,7 @@ export function catalogueVotable(
     ' <RESOURCE type="results">',
     '  <COOSYS ID="icrs" system="ICRS"/>',
     '  <TIMESYS ID="utc" timescale="UTC" refposition="TOPOCENTER"/>',
-    `  <TABLE name="${xml(name)}" nrows="${rows.length}">`,
+    `  <TABLE ID="catalogue" name="${xml(name)}" nrows="${rows.length}">`,
   ];
   for (const [key, value] of Object.entries(params)) {
     lines.push(`   <PARAM name="${xml(key)}" datatype="unicodeChar" arraysize="*" value="${xml(value)}"/>`);
