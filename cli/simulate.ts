@@ -1,4 +1,4 @@
-import { mkdir, open, readFile, rename, stat, writeFile } from 'node:fs/promises';
+import { mkdir, open, rename, stat, writeFile } from 'node:fs/promises';
 import { dirname, join } from 'node:path';
 import { type Command, InvalidArgumentError } from 'commander';
 import type { NightExposure, SimulatedTruth } from '../simulate/index.ts';
@@ -15,7 +15,7 @@ interface SimulateOptions {
 const WRONG_USAGE = 2;
 
 /** `shiftwork simulate`: writes practice nights of the Larkfield survey and, apart from them, their truth. */
-export function addSimulate(program: Command): void {
+export function registerSimulate(program: Command): void {
   program
     .command('simulate')
     .description('make practice nights of the invented Larkfield survey, with known truth')
@@ -44,7 +44,8 @@ async function simulate({ out, ...chosen }: SimulateOptions): Promise<number> {
   );
   const { starsFromFile } = await import('../templates/prepare/file-contents.ts');
   const { barycentricVelocityKmS } = await import('../pipeline/measure/barycentric.ts');
-  const stars = starsFromFile(await readFile(new URL('../templates/families/stars.fits', import.meta.url)));
+  const { installedFile } = await import('./installed-families.ts');
+  const stars = starsFromFile(installedFile('stars.fits'));
   const observerVelocity = (midMjd: number, raDeg: number, decDeg: number): number =>
     barycentricVelocityKmS(midMjd, HARROW_FELL, raDeg, decDeg);
 
