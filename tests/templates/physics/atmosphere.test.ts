@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { buildAtmosphere } from '../../../templates/physics/atmosphere.ts';
+import { buildAtmosphere, convectiveShare } from '../../../templates/physics/atmosphere.ts';
 import { compose } from '../../../templates/physics/composition.ts';
 import { BOLTZMANN } from '../../../templates/physics/constants.ts';
 import { continuumOpacity } from '../../../templates/physics/continuum.ts';
@@ -47,6 +47,16 @@ describe('buildAtmosphere', () => {
         giant.continuum.gas.temperature[i - 1]!,
       );
     }
+  });
+});
+
+describe('convectiveShare', () => {
+  it('is full in the Sun and giants, none in A stars, and lasts longer in white dwarfs', () => {
+    expect(convectiveShare(5777, 4.44)).toBe(1);
+    expect(convectiveShare(4400, 2)).toBe(1);
+    expect(convectiveShare(8000, 4.2)).toBe(0);
+    expect(convectiveShare(8000, 8)).toBe(1);
+    expect(convectiveShare(7100, 4.2)).toBeCloseTo(0.5, 12);
   });
 });
 
