@@ -68,8 +68,7 @@ export function cleanArm(
       inverseVariance[i] = 0;
     }
   }
-  const window = LEVEL_WIDTH_KM_S / pixelKmS(wavelength, wavelength.length >> 1) / 2;
-  const level = smoothLevel(flux, used, 2 * Math.max((LEAST_LEVEL_PIXELS - 1) / 2, Math.round(window)) + 1);
+  const level = smoothLevel(flux, used, levelWindow(wavelength));
   weighAtmosphere(inverseVariance, used, level, wavelength, options.atmosphereBands, toAxis);
   for (let i = 0; i < used.length; i++) if (used[i] === 0) inverseVariance[i] = 0;
   return {
@@ -82,7 +81,14 @@ export function cleanArm(
   };
 }
 
-/** Width of pixel i in km/s. */
+/** Native pixels in the level's window, odd. */
+function levelWindow(wavelength: Float64Array): number {
+  const half = LEVEL_WIDTH_KM_S / pixelKmS(wavelength, wavelength.length >> 1) / 2;
+  const most = Math.max(LEAST_LEVEL_PIXELS, wavelength.length) >> 1;
+  return 2 * Math.min(most, Math.max(LEAST_LEVEL_PIXELS >> 1, Math.round(half))) + 1;
+}
+
+/** Width of pixel i in km/s; 0 when the arm has a single pixel. */
 function pixelKmS(wavelength: Float64Array, i: number): number {
   const low = Math.max(0, Math.min(i - 1, wavelength.length - 2));
   const high = Math.min(low + (i > 0 ? 2 : 1), wavelength.length - 1);

@@ -6,8 +6,10 @@ const SPIKE_SIGMAS = 8;
 const WIDEST_SPIKE = 5;
 /** Window of the surroundings' median: more than twice the widest spike, so that a spike is always a minority. */
 const SURROUNDINGS = 2 * WIDEST_SPIKE + 3;
-/** Noise of a difference of two pixels, times 4: an edge must be sharper than the line spread by this too. */
-const EDGE_NOISE_SIGMAS = 4 * Math.SQRT2;
+/** Window in which a real line is a minority: heights are measured from here, so that a wide line looks wide. */
+const WIDE_SURROUNDINGS = 51;
+/** An edge must beat the line spread by 2.5 sigmas of the difference of two pixels, and so must the other one. */
+const EDGE_NOISE_SIGMAS = 2.5 * Math.SQRT2;
 /** Stated line spreads are trusted to this factor: sharper by more is no line. */
 const LINE_SPREAD_TRUST = 0.85;
 /** Line spread where none is stated: the sharpest that is still sampled critically (2 pixels full width). */
@@ -27,10 +29,8 @@ export function findSpikes(
   inverseVariance: Float64Array,
   sigmaPixels: ((pixel: number) => number) | null,
 ): number[] {
-  const surroundings = runningMedian(flux, SURROUNDINGS, inverseVariance);
-  const height = Float64Array.from(flux, (f, i) =>
-    inverseVariance[i]! > 0 ? (f - surroundings[i]!) * Math.sqrt(inverseVariance[i]!) : 0,
-  );
+  const height = heightAbove(flux, inverseVariance, SURROUNDINGS);
+  const wideHeight = heightAbove(flux, inverseVariance, WIDE_SURROUNDINGS);
   const found = new Set<number>();
   for (let i = 0; i < height.length; i++) {
     const sign = Math.sign(height[i]!);
@@ -43,13 +43,23 @@ export function findSpikes(
     while (at(last + 1) > 0.5 * peak) last++;
     if (last - first >= WIDEST_SPIKE) continue;
     const sigma = sigmaPixels === null ? CRITICAL_SIGMA_PIXELS : LINE_SPREAD_TRUST * sigmaPixels(i);
-    const steepest = steepestEdge(sigma) + EDGE_NOISE_SIGMAS / peak;
-    const leftEdge = (at(first) - at(first - 1)) / peak;
-    const rightEdge = (at(last) - at(last + 1)) / peak;
+    // A line wider than the narrow window lifts its own surroundings; the wide one tells its true height.
+    const whole = Math.max(peak, sign * wideHeight[i]!);
+    const steepest = steepestEdge(sigma) + EDGE_NOISE_SIGMAS / whole;
+    const leftEdge = (at(first) - at(first - 1)) / whole;
+    const rightEdge = (at(last) - at(last + 1)) / whole;
     if (leftEdge <= steepest || rightEdge <= steepest) continue;
     for (let j = Math.max(0, first - 1); j <= Math.min(height.length - 1, last + 1); j++) found.add(j);
   }
   return [...found].sort((a, b) => a - b);
+}
+
+/** Flux above the running median, in sigmas; 0 where unusable. */
+function heightAbove(flux: Float64Array, inverseVariance: Float64Array, window: number): Float64Array {
+  const surroundings = runningMedian(flux, window, inverseVariance);
+  return flux.map((f, i) =>
+    inverseVariance[i]! > 0 ? (f - surroundings[i]!) * Math.sqrt(inverseVariance[i]!) : 0,
+  );
 }
 
 function isLocalPeak(height: Float64Array, i: number, sign: number): boolean {
@@ -82,7 +92,7 @@ export function steepestEdge(sigma: number): number {
   let steepest = 0;
   for (let phase = 0; phase <= 0.5; phase += 0.05) {
     const highest = pixel(phase);
-    for (let j = -1; j <= 4; j++) {
+    for (let j = -1; j <= 2 * s + 1; j++) {
       steepest = Math.max(steepest, Math.abs(pixel(j + phase) - pixel(j + 1 + phase)) / highest);
     }
   }

@@ -143,6 +143,6 @@ describe('seededRandom()', () => {
   it('draws whole numbers in range, all of them', () => {
     const random = seededRandom(26);
     const seen = new Set(Array.from({ length: 200 }, () => random.integer(6)));
-    expect([...seen].sort()).toEqual([0, 1, 2, 3, 4, 5]);
+    expect([...seen].sort((a, b) => a - b)).toEqual([0, 1, 2, 3, 4, 5]);
   });
 });

@@ -2,7 +2,12 @@ import { describe, expect, it } from 'vitest';
 import { NO_EXPOSURE_CONTEXT, toGrid } from '../../../pipeline/grid/index.ts';
 import { DEFAULT_MATCH_OPTIONS, matchFamilies } from '../../../pipeline/match/index.ts';
 import { chiSquareByDirectSum } from '../../reference/chi-square-by-direct-sum.ts';
-import { armFromFamily, FAMILY_FIRST_STEP, spectrumOf, syntheticFamily } from './synthetic.ts';
+import {
+  armFromFamily,
+  FAMILY_FIRST_STEP,
+  spectrumOf,
+  syntheticFamily,
+} from '../../reference/synthetic-spectra.ts';
 
 const MISMATCH = DEFAULT_MATCH_OPTIONS.mismatch;
 const options = { ...DEFAULT_MATCH_OPTIONS, polynomialOrder: 1 };

@@ -1,7 +1,7 @@
-import { seededRandom } from '../../../pipeline/core/random.ts';
-import { DEFAULT_STEP } from '../../../pipeline/grid/grid-options.ts';
-import type { Arm, Spectrum } from '../../../pipeline/decode/spectrum.ts';
-import type { Family, Kind } from '../../../templates/family.ts';
+import { seededRandom } from '../../pipeline/core/random.ts';
+import { DEFAULT_STEP } from '../../pipeline/grid/grid-options.ts';
+import type { Arm, Spectrum } from '../../pipeline/decode/spectrum.ts';
+import type { Family, Kind } from '../../templates/family.ts';
 
 /** Start of the synthetic families' grids: a whole multiple of the step, near 3,000 Å. */
 export const FAMILY_FIRST_STEP = Math.round(Math.log(3000) / DEFAULT_STEP);
