@@ -29,7 +29,7 @@ describe('matchFamilies()', () => {
     expect(worst).toBeLessThan(1e-9);
   });
 
-  it('gives the chi-square of a direct sum for overlapping arms that the family covers in part', () => {
+  it('gives the chi-square of a direct sum, to 1e-7, for overlapping arms that the family covers in part', () => {
     const family = syntheticFamily(3, 'quasar', { rows: 3, length: 1500, redshiftMin: 0, redshiftMax: 0.4 });
     const blue = armFromFamily(family, FAMILY_FIRST_STEP + 900, 700, 400, 0.1, 4);
     const red = armFromFamily(family, FAMILY_FIRST_STEP + 1550, 600, 1050, 0.1, 5);
@@ -47,7 +47,9 @@ describe('matchFamilies()', () => {
       worst = Math.max(worst, Math.abs(curve.chiSquare[i]! / direct - 1));
     }
     expect(partly).toBeGreaterThan(20);
-    expect(worst).toBeLessThan(1e-6);
+    // The search puts a ridge of 1e-12 on the polynomials, the direct sum none. Where only a few pixels lie
+    // outside, their Gram matrix has eigenvalues near 1e-4, and 1e-8 of their part of chi-square is left.
+    expect(worst).toBeLessThan(1e-7);
   });
 });
 
