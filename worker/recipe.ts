@@ -1,9 +1,11 @@
 import { createHash } from 'node:crypto';
-import { readdirSync, readFileSync } from 'node:fs';
+import { existsSync, readFileSync } from 'node:fs';
 import { join } from 'node:path';
+import { fileURLToPath } from 'node:url';
 import type { MeasuringOptions } from '../config/measuring.ts';
 import { RECIPE_VERSION } from '../pipeline/index.ts';
 import { byCodeUnit } from '../store/index.ts';
+import { PREPARATION_VERSION } from '../templates/library.ts';
 
 /** Everything the numbers of a row depend on, besides the input's bytes. */
 export interface Recipe {
@@ -37,19 +39,28 @@ export function canonicalJson(value: unknown): string {
   return JSON.stringify(value);
 }
 
+/** Names of the family files in their folder. */
+export const FAMILY_FILES = {
+  stars: 'stars.fits',
+  populations: 'populations.fits',
+  quasars: 'quasars.fits',
+} as const;
+
+/** Where the family files are installed: beside the program's own code, or above its compiled form. */
+export function familyFolder(): string {
+  const beside = new URL('../templates/families/', import.meta.url);
+  const above = new URL('../../templates/families/', import.meta.url);
+  return fileURLToPath(existsSync(beside) ? beside : above);
+}
+
 /**
- * One hash over the family files, names included, in code-unit order of the names.
+ * One hash over the family files and the version of their preparation.
  *
- * @throws Error when the folder cannot be read
+ * @throws Error when a file cannot be read
  */
 export function familyFilesHash(directory: string): string {
-  const hash = createHash('sha256');
-  const names = readdirSync(directory, { withFileTypes: true })
-    .filter((entry) => entry.isFile())
-    .map((entry) => entry.name)
-    .sort(byCodeUnit((name) => name));
-  for (const name of names) {
-    hash.update(`${name}\n`);
+  const hash = createHash('sha256').update(`preparation ${PREPARATION_VERSION}`);
+  for (const name of Object.values(FAMILY_FILES)) {
     hash.update(
       createHash('sha256')
         .update(readFileSync(join(directory, name)))

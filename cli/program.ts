@@ -1,0 +1,66 @@
+import { Command } from 'commander';
+import { readFileSync } from 'node:fs';
+import { registerConfig } from './config.ts';
+import { registerEnqueue } from './enqueue.ts';
+import { registerInspect } from './inspect.ts';
+import { registerReport } from './report.ts';
+import { registerRequeue } from './requeue.ts';
+import { registerRun } from './run.ts';
+
+import { registerStatus } from './status.ts';
+import { registerTemplates } from './templates.ts';
+import { registerWork } from './work.ts';
+
+/** Every verb of the command, none of them loaded: what a verb needs is imported when it is used. */
+export function createProgram(): Command {
+  const program = new Command('shiftwork')
+    .description(
+      'Measures what each object of a spectroscopic survey night is, and its redshift or velocity.',
+    )
+    .version(programVersion())
+    .showHelpAfterError('(see shiftwork --help)')
+    .addHelpText('after', EXAMPLES)
+    .exitOverride();
+  for (const register of [
+    registerRun,
+    registerEnqueue,
+    registerWork,
+    registerStatus,
+    registerReport,
+    registerRequeue,
+    registerInspect,
+
+    registerTemplates,
+    registerConfig,
+  ]) {
+    register(program);
+  }
+  for (const verb of program.commands) verb.exitOverride();
+  return program;
+}
+
+/** The version in package.json, which stands one folder above the sources and two above the compiled program. */
+export function programVersion(): string {
+  for (const place of ['../package.json', '../../package.json']) {
+    try {
+      const { name, version } = JSON.parse(readFileSync(new URL(place, import.meta.url), 'utf8')) as {
+        name: string;
+        version: string;
+      };
+      if (name === 'shiftwork') return version;
+    } catch {
+      // Not here: the next place, then the answer below.
+    }
+  }
+  return 'unknown';
+}
+
+const EXAMPLES = `
+Examples:
+  shiftwork run nights/2031-04-02          measure a folder, write catalogue and report
+  shiftwork status                         how far every night is
+  shiftwork requeue 2031-04-02 --failed    put what could not be read back, then run again
+  shiftwork config                         every option, its value, and why it is what it is
+
+Exit status: 0 every expected spectrum has a row; 1 something is missing; 2 wrong usage;
+3 the workspace is busy; 4 the machine is at fault (disk full, no server); 130 interrupted.`;
