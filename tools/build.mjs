@@ -12,9 +12,6 @@ const ROOT = dirname(dirname(fileURLToPath(import.meta.url)));
 const NEXT = join(ROOT, 'dist-next');
 const DIST = join(ROOT, 'dist');
 
-/** The browser's own sources compile with the DOM's types, so they have their own settings. */
-const CLIENT_PROJECT = join(ROOT, 'report/client/tsconfig.json');
-
 /** What the compiler consumes, and what is for readers only; everything else is read at run time. */
 const NOT_COPIED = new Set(['.ts', '.md']);
 
@@ -32,7 +29,10 @@ const started = performance.now();
 const hash = sourceHash(ROOT);
 rmSync(NEXT, { recursive: true, force: true });
 compile('-p', join(ROOT, 'tsconfig.build.json'), '--outDir', NEXT);
-if (existsSync(CLIENT_PROJECT)) compile('-p', CLIENT_PROJECT, '--outDir', join(NEXT, 'report/client'));
+// The browser's own sources compile with the DOM's types, and go into the report as one script.
+compile('-p', join(ROOT, 'report/client/tsconfig.json'), '--noEmit');
+const { buildPageScript } = await import('../report/build-page-script.mjs');
+await buildPageScript(join(NEXT, 'report/client'));
 
 let copied = 0;
 for (const name of SOURCE_FOLDERS.flatMap((folder) => filesUnder(ROOT, folder))) {
