@@ -57,7 +57,7 @@ export const MIGRATIONS: readonly Migration[] = [
         measured_at text not null, input_sha256 text, fault_code text, kind text, family text,
         ${REAL_MEASURED.map((column) => `${column} ${real}`).join(', ')},
         needs_review integer not null, reasons_json text not null, runner_up_kind text,
-        lines_detected integer, barycentric_source text, lines_json text not null, features_json text not null,
+        lines_detected integer, barycentric_source text, calibration_id text, lines_json text not null, features_json text not null,
         primary key (spectrum_id, recipe_hash))`,
       `create table candidates (spectrum_id text not null, recipe_hash text not null, place integer not null,
         kind text not null, family text not null, redshift ${real} not null, redshift_error ${real},

@@ -57,6 +57,7 @@ function answerColumns(answer: Answer) {
     strongest_line_snr: finiteOrNull(answer.strongestLineSnr),
     barycentric_correction_km_s: finiteOrNull(answer.barycentricCorrectionKmS),
     barycentric_source: answer.barycentricSource,
+    calibration_id: answer.calibrationId,
     lines_json: storedJson(answer.lines),
     features_json: storedJson(answer.features),
   };
@@ -109,6 +110,7 @@ const NO_ANSWER: Answer = {
   strongestLineSnr: null,
   barycentricCorrectionKmS: null,
   barycentricSource: 'unknown',
+  calibrationId: null,
   candidates: [],
   lines: [],
   features: {},

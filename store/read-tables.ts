@@ -110,7 +110,7 @@ export async function catalogueRows(db: Kysely<Database>, night: string): Promis
         input_sha256: row.input_sha256,
         recipe_hash: row.recipe_hash,
         run_id: row.run_id,
-        calibration_id: null,
+        calibration_id: row.calibration_id,
       };
     })
     .sort(byCodeUnit((row) => row.spectrum_id));

@@ -110,6 +110,7 @@ export interface MeasurementTable {
   strongest_line_snr: number | null;
   barycentric_correction_km_s: number | null;
   barycentric_source: string | null;
+  calibration_id: string | null;
   lines_json: string;
   features_json: string;
 }

@@ -86,6 +86,8 @@ export interface Answer {
   readonly strongestLineSnr: number | null;
   readonly barycentricCorrectionKmS: number | null;
   readonly barycentricSource: BarycentricSource;
+  /** Names the calibration behind `confidence`; null when there is no confidence to calibrate. */
+  readonly calibrationId: string | null;
   readonly candidates: readonly CandidateSummary[];
   readonly lines: readonly LineMeasurement[];
   /** What the calibration reads: named numbers, all finite. */

@@ -12,10 +12,12 @@ export const SAME_REDSHIFT_KM_S: Readonly<Record<Kind, number>> = { star: 100, g
 /**
  * What searching costs, in chi-square: 2 ln(number of independent trials). Noise alone offers the best of N
  * trials, whose expected gain is 2 ln N. Stars: about 45 velocities × 7 families less their strong overlap;
- * galaxies: a range of 1 in ln(1+z) over a valley of 150 km/s, ×2 line widths; quasars: a range of 2 over
- * 1,000 km/s, and a score of free broad-line shapes at each.
+ * galaxies: a range of 1 in ln(1+z) over valleys of 150 km/s, × 2 line widths; quasars: a range of 2 over
+ * valleys of 1,000 km/s (600 of them) × a few tens of free line shapes. On real spectra scaled down onto real
+ * sky residuals the share of right answers is flat to 1 per cent between 12 and 34 for quasars and 13 and 21
+ * for galaxies.
  */
-export const LOOK_ELSEWHERE: Readonly<Record<Kind, number>> = { star: 9, galaxy: 17, quasar: 28 };
+export const LOOK_ELSEWHERE: Readonly<Record<Kind, number>> = { star: 9, galaxy: 17, quasar: 20 };
 
 /** Prior weight of each kind; need not sum to one. */
 export type KindPrior = Readonly<Record<Kind, number>>;
