@@ -27,7 +27,7 @@ export interface FamilyFiles {
 }
 
 /** Raised with every change of the preparation that moves a number: part of the library's hash. */
-export const PREPARATION_VERSION = 2;
+export const PREPARATION_VERSION = 3;
 
 /** Line spreads are rounded to powers of this. */
 const LINE_SPREAD_STEP = 1.05;

@@ -93,7 +93,7 @@ export function distantGalaxyFamilies(
     componentOf(label, 'continuum', '', broaden(flux, sigma)),
   );
   const lines = lineComponents(lineSpreadKmS);
-  const componentsAt = absorbedWithRedshift([...continua, ...lines], GRID);
+  const componentsAt = absorbedWithRedshift([...continua, ...lines], GRID, 0);
   const searchGrid = pairedGrid(GRID);
   const wavelengths = wavelengthsOf(searchGrid);
   const lymanAlpha = toUnitRms(averagePairs(lines[0]!.flux));

@@ -15,11 +15,13 @@ const KEPT_VERSIONS = 12;
  * redshift steps are kept.
  *
  * @param clear components as emitted, on `grid`
+ * @param proximityKmS how far the sources thin out the hydrogen around them; 0 = not at all
  * @returns the components at a redshift; those without light blueward of Lyα are shared by all redshifts
  */
 export function absorbedWithRedshift(
   clear: readonly Component[],
   grid: LogGrid,
+  proximityKmS: number,
 ): (redshift: number) => readonly Component[] {
   const wavelengths = wavelengthsOf(grid).filter(
     (wavelength) => wavelength < REST_WAVELENGTHS.hydrogenLymanAlpha,
@@ -28,7 +30,7 @@ export function absorbedWithRedshift(
   return (redshift) => {
     if (redshift < ABSORBED_FROM) return clear;
     const step = Math.round(redshift / STEP);
-    const known = versions.get(step) ?? absorbed(clear, wavelengths, step * STEP);
+    const known = versions.get(step) ?? absorbed(clear, wavelengths, step * STEP, proximityKmS);
     // Re-inserting moves it to the end: the first key is the one unused for longest.
     versions.delete(step);
     versions.set(step, known);
@@ -41,8 +43,9 @@ function absorbed(
   components: readonly Component[],
   blueward: Float64Array,
   redshift: number,
+  proximityKmS: number,
 ): readonly Component[] {
-  const through = blueward.map((wavelength) => intergalacticTransmission(wavelength, redshift));
+  const through = blueward.map((wavelength) => intergalacticTransmission(wavelength, redshift, proximityKmS));
   return components.map((component) => {
     if (component.first >= through.length) return component;
     const flux = component.flux.slice();

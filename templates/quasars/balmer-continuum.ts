@@ -34,7 +34,7 @@ export function balmerContinuum(grid: LogGrid): Float32Array {
   const sigma = SIGMA_KM_S / LIGHT_SPEED_KM_S;
   for (let level = FIRST_LEVEL; level <= LAST_LEVEL; level++) {
     const centre = 3647.05 / (1 - 4 / level ** 2);
-    // Strengths fall as n^−2.6 (Storey & Hummer 1995, fitted); 0.38 makes the series meet the edge.
+    // Strengths fall as n^−2.6 (Storey & Hummer 1995, fitted); 0.38 keeps the blend within a factor two of the edge.
     const strength = 0.38 * (level / FIRST_LEVEL) ** -2.6;
     for (let i = 0; i < grid.length; i++) {
       const off = Math.log(wavelengths[i]! / centre) / sigma;

@@ -2,6 +2,7 @@ import type { Component, LogGrid } from '../family.ts';
 import { withFarUltraviolet } from '../galaxies/far-ultraviolet.ts';
 import type { PopulationSet } from '../galaxies/population-set.ts';
 import { absorbedWithRedshift } from '../intergalactic/absorbed-components.ts';
+import { QUASAR_PROXIMITY_KM_S } from '../intergalactic/madau.ts';
 import { STRONG_GROUPS, WEAK_GROUPS } from '../lines/emission-groups.ts';
 import { REST_WAVELENGTHS } from '../lines/rest-wavelengths.ts';
 import { LIGHT_SPEED_KM_S } from '../physics/constants.ts';
@@ -57,7 +58,7 @@ export function quasarComponents(
     ...narrowComponents(QUASAR_GRID, lineSpreadKmS),
     ...hostComponents(hosts, lineSpreadKmS),
   ];
-  return absorbedWithRedshift(clear, QUASAR_GRID);
+  return absorbedWithRedshift(clear, QUASAR_GRID, QUASAR_PROXIMITY_KM_S);
 }
 
 function powerLaws(wavelengths: Float64Array): Component[] {

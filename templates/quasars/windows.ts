@@ -1,5 +1,5 @@
 import type { LogGrid } from '../family.ts';
-import { intergalacticTransmission } from '../intergalactic/madau.ts';
+import { intergalacticTransmission, QUASAR_PROXIMITY_KM_S } from '../intergalactic/madau.ts';
 import { wavelengthsOf } from '../prepare/log-grid.ts';
 import { principalVectors } from '../prepare/principal-vectors.ts';
 import { drawQuasars } from './draws.ts';
@@ -47,7 +47,9 @@ export function windowVectors(grid: LogGrid, iron: Float32Array): Float32Array[]
     );
     const rows = draws.map((flux, k) => {
       const redshift = from + ((to - from) * (k + 0.5)) / draws.length;
-      const seen = flux.map((value, i) => value * intergalacticTransmission(wavelengths[i]!, redshift));
+      const seen = flux.map(
+        (value, i) => value * intergalacticTransmission(wavelengths[i]!, redshift, QUASAR_PROXIMITY_KM_S),
+      );
       const level = medianInView(seen, weight);
       return seen.map((value) => value / level);
     });
