@@ -89,7 +89,7 @@ describe('populations.fits', () => {
     }
   });
 
-  it('has Hβ absorption of 1.2 to 2 Å when old and at its deepest, 5 to 8 Å, near half a Gyr', () => {
+  it('has Hβ absorption of 1.1 to 2 Å when old and at its deepest, 5 to 8 Å, near half a Gyr', () => {
     // Index of Trager et al. 1998, table 2 (air); published old populations have 1.5, A stars 8 Å.
     const vacuum = 1.000279;
     const band = (from: number, to: number): readonly [number, number] => [from * vacuum, to * vacuum];
