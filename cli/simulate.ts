@@ -39,19 +39,19 @@ async function simulate({ out, ...chosen }: SimulateOptions): Promise<number> {
     console.error(`${truthFile} exists: name a folder without a practice night, or remove this one`);
     return WRONG_USAGE;
   }
-  const { DEFAULT_SURVEY, HARROW_FELL, simulateNights, truthCsv, truthOf } = await import(
+  const { DEFAULT_SURVEY, HARROW_FELL, makersFrom, simulateNights, truthCsv, truthOf } = await import(
     '../simulate/index.ts'
   );
   const { starsFromFile } = await import('../templates/prepare/file-contents.ts');
   const { barycentricVelocityKmS } = await import('../pipeline/measure/barycentric.ts');
   const { installedFile } = await import('./installed-families.ts');
-  const stars = starsFromFile(installedFile('stars.fits'));
+  const makers = makersFrom(starsFromFile(installedFile('stars.fits')));
   const observerVelocity = (midMjd: number, raDeg: number, decDeg: number): number =>
     barycentricVelocityKmS(midMjd, HARROW_FELL, raDeg, decDeg);
 
   const truth: SimulatedTruth[] = [];
   try {
-    for (const exposure of simulateNights({ ...DEFAULT_SURVEY, ...chosen }, stars, observerVelocity)) {
+    for (const exposure of simulateNights({ ...DEFAULT_SURVEY, ...chosen }, makers, observerVelocity)) {
       await writeExposure(out, exposure);
       truth.push(...truthOf(exposure));
     }

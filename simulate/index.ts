@@ -8,5 +8,6 @@ export {
   simulateNights,
   type SurveyParameters,
 } from './night.ts';
+export { type Makers, makersFrom } from './sources/makers.ts';
 export { HARROW_FELL } from './survey/harrow-fell.ts';
 export { type SimulatedTruth, truthCsv, truthOf } from './truth.ts';

@@ -1,7 +1,6 @@
-import type { StarGrid } from '../templates/prepare/star-grid.ts';
 import { expose, type Exposure, type ExposureConditions, type ObserverVelocity } from './exposure.ts';
 import { FIBRES } from './instrument/curlew.ts';
-import { makersFrom } from './sources/makers.ts';
+import type { Makers } from './sources/makers.ts';
 import { isoDate } from './survey/calendar.ts';
 import { type Field, makeField } from './survey/field.ts';
 import { airmassAt } from './survey/harrow-fell.ts';
@@ -50,19 +49,18 @@ const BROKEN_OFF_SHARE = 0.37;
  * A whole survey of practice nights, one exposure at a time, since one takes tens of megabytes. Each night
  * ends with an exposure whose file broke off.
  *
- * @param stars what stars and populations are interpolated between
+ * @param makers of the objects, from `makersFrom`
  * @param observerVelocity of Harrow Fell
  * @throws RangeError when a parameter is out of its range
  */
 export function* simulateNights(
   parameters: SurveyParameters,
-  stars: StarGrid,
+  makers: Makers,
   observerVelocity: ObserverVelocity,
 ): Generator<NightExposure, void> {
   requireWhole('nights', parameters.nights, 1, 1000);
   requireWhole('fields', parameters.fields, 1, MOST_FIELDS);
   requireWhole('fibres', parameters.fibres, 1, FIBRES);
-  const makers = makersFrom(stars);
   for (let n = 0; n < parameters.nights; n++) {
     const day = FIRST_NIGHT_MJD + n;
     const night = isoDate(day);
