@@ -23,7 +23,7 @@ export function starInputs(lineList: string): { tables: PhysicsTables; lines: St
 }
 
 /**
- * Every star of the grid, one after the other in this thread: tens of minutes.
+ * Every star of the grid, one after the other in this thread: about ten minutes.
  *
  * @param lineList text of the list of atomic lines
  * @param report told after each star

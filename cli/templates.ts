@@ -40,7 +40,7 @@ export function registerTemplates(program: Command): void {
       'CSV: air wavelength (Å), atomic number, ion, lower energy (eV), log gf',
     )
     .option('--out <folder>', 'where to write; default: the installed families')
-    .option('--keep-stars', 'use the stars.fits that is there (making it takes tens of minutes)')
+    .option('--keep-stars', 'use the stars.fits that is there (making it takes about ten minutes)')
     .addHelpText('after', '\nExample:\n  shiftwork templates build --lines lines.csv --out my-families')
     .action(async (options: { lines: string; out?: string; keepStars?: true }) => {
       process.exitCode = await build(options);

@@ -16,7 +16,7 @@ import { installedFile } from './installed-families.ts';
 import { starInputs } from './star-synthesis.ts';
 
 /** Stars computed again when a line list is at hand: one cool enough for molecules, one hot. */
-const SAMPLE = ['dwarf-4500-4.5+0.0', 'dwarf-9500-4.2+0.0'];
+const SAMPLE = ['dwarf 4500 4.5 +0.0', 'dwarf 9500 4.2 +0.0'];
 /** Largest relative difference of a pixel: stored numbers have 24 bits, exp and log differ in the last bits. */
 const TOLERANCE = 1e-5;
 
