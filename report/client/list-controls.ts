@@ -114,6 +114,8 @@ function labelled<T extends HTMLElement>(name: string, field: T): { label: HTMLL
   const label = document.createElement('label');
   const caption = document.createElement('span');
   caption.textContent = name;
+  // Else the options of a select would be part of its name.
+  field.setAttribute('aria-label', name);
   label.append(caption, field);
   return { label, field };
 }
