@@ -6,7 +6,8 @@ import { registerInspect } from './inspect.ts';
 import { registerReport } from './report.ts';
 import { registerRequeue } from './requeue.ts';
 import { registerRun } from './run.ts';
-
+import { registerScorecard } from './scorecard.ts';
+import { registerSimulate } from './simulate.ts';
 import { registerStatus } from './status.ts';
 import { registerTemplates } from './templates.ts';
 import { registerWork } from './work.ts';
@@ -29,6 +30,8 @@ export function createProgram(): Command {
     registerReport,
     registerRequeue,
     registerInspect,
+    registerSimulate,
+    registerScorecard,
 
     registerTemplates,
     registerConfig,

@@ -9,8 +9,8 @@ import { programVersion } from './program.ts';
 export function poolOptions(operating: OperatingOptions): PoolOptions {
   return {
     threads: operating.threads ?? availableParallelism(),
-    taskBaseMs: operating.taskBaseS * 1_000,
-    taskMsPerSpectrum: operating.taskSecondsPerSpectrum * 1_000,
+    loadLimitMs: operating.loadLimitS * 1_000,
+    spectrumLimitMs: operating.spectrumLimitS * 1_000,
     threadMegabytes: operating.threadMegabytes,
   };
 }

@@ -1,4 +1,6 @@
 import type { Command } from 'commander';
+import { existsSync } from 'node:fs';
+import { join } from 'node:path';
 import type { RunProgress, RunSummary } from '../worker/run-night.ts';
 import { type CommonFlags, readConfiguration, withCommonFlags } from './configuration.ts';
 import { EXIT } from './exit-status.ts';
@@ -23,6 +25,9 @@ Examples:
   shiftwork run nights/2031-04-02 --again       measure everything anew
 
 A run that was stopped or killed goes on where it was when it is started again.`;
+
+/** The last file that is written of a night: when it is there, all are. */
+const LAST_WRITTEN = 'report.html';
 
 /** `shiftwork run PATH…`: one go on this machine, from files to catalogue and report. */
 export function registerRun(program: Command): void {
@@ -66,8 +71,11 @@ async function runVerb(paths: string[], flags: RunFlags): Promise<void> {
       },
       async (store, done) => {
         if (done.interrupted || done.missing > 0) return;
+        const folder = done.workspace.night(done.night);
+        // Nothing moved since they were written; verdicts reach them through `shiftwork report`.
+        if (done.measured === 0 && existsSync(join(folder, LAST_WRITTEN))) return;
         const { writeNightOutputs } = await import('../report/index.ts');
-        await writeNightOutputs(await nightReader(store, done.night), done.workspace.night(done.night));
+        await writeNightOutputs(await nightReader(store, done.night), folder);
       },
     );
     printSummary(summary);

@@ -6,8 +6,8 @@ export interface OperatingOptions {
   readonly threads: number | null;
   readonly chunk: number | null;
   readonly redisUrl: string | null;
-  readonly taskBaseS: number;
-  readonly taskSecondsPerSpectrum: number;
+  readonly loadLimitS: number;
+  readonly spectrumLimitS: number;
   readonly threadMegabytes: number;
 }
 
@@ -41,17 +41,17 @@ export const OPERATING_OPTIONS: {
     default: null,
     why: 'the queue that several machines share; none keeps the queue inside the program, with nothing to install',
   },
-  taskBaseS: {
+  loadLimitS: {
     unit: 's',
     range: [1, 3_600],
-    default: 60,
-    why: 'longest time of a chunk before its spectra are counted: loading the template families takes seconds, a minute when the machine is busy',
+    default: 120,
+    why: 'longest time for a thread to start and load the template families, which takes seconds, a minute when the machine is busy',
   },
-  taskSecondsPerSpectrum: {
+  spectrumLimitS: {
     unit: 's',
     range: [0.1, 600],
-    default: 10,
-    why: 'longest time allowed for each spectrum of a chunk, some twenty times what one takes; beyond it the chunk is split to find the one at fault',
+    default: 30,
+    why: 'longest time for one spectrum, tens of times what one takes; beyond it the chunk is split to find the one at fault',
   },
   threadMegabytes: {
     unit: 'MB',

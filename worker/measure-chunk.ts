@@ -25,8 +25,14 @@ const ROWS_AT_ONCE = 8;
  * one never reaches another.
  *
  * @param now milliseconds from any fixed start, for the stage times
+ * @param onSpectrum called after each spectrum
  */
-export function measureChunk(task: ChunkTask, measure: Measure, now: () => number): ChunkResult {
+export function measureChunk(
+  task: ChunkTask,
+  measure: Measure,
+  now: () => number,
+  onSpectrum: () => void,
+): ChunkResult {
   const outcomes: Outcome[] = [];
   const stageMs: Record<string, number> = {};
   const troubles: ChunkResult['troubles'][number][] = [];
@@ -63,6 +69,7 @@ export function measureChunk(task: ChunkTask, measure: Measure, now: () => numbe
           onStage('decode');
           spectra.forEach((read, i) => {
             outcomesOfFile.push(measureOne(input, input.spectra[first + i]!.spectrumId, read));
+            onSpectrum();
           });
         }
       });

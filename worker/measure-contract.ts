@@ -39,7 +39,13 @@ export interface ExposureTask {
   readonly inputs: readonly TaskInput[];
 }
 
-export type ThreadTask = ChunkTask | ExposureTask;
+/** What a thread is given: the task and where it counts its steps, so that one that hangs can be told. */
+export type ThreadTask = (ChunkTask | ExposureTask) & { readonly beat: SharedArrayBuffer };
+
+/** Counts a step: the families are loaded, or one more spectrum is done. */
+export function countStep(beat: SharedArrayBuffer): void {
+  Atomics.add(new Int32Array(beat), 0, 1);
+}
 
 /** A thread was lost with its task: out of time, out of memory, or ended by what it worked on. */
 export class ThreadLost extends Error {

@@ -20,9 +20,10 @@ export interface MeasurePool {
 
 export interface PoolOptions {
   readonly threads: number;
-  /** Longest time for one task, milliseconds: a base for loading, and a share for each spectrum. */
-  readonly taskBaseMs: number;
-  readonly taskMsPerSpectrum: number;
+  /** Longest time for a thread to start and load its families, milliseconds. */
+  readonly loadLimitMs: number;
+  /** Longest time for one spectrum, milliseconds. */
+  readonly spectrumLimitMs: number;
   /** Heap of one thread, megabytes; a thread that needs more is ended. */
   readonly threadMegabytes: number;
   /** The file that runs in the threads; tests put their own in its place. */
@@ -47,19 +48,15 @@ export function openMeasurePool(options: PoolOptions): MeasurePool {
   });
   // A thread lost between tasks; whoever needs one gets a new one, and a lost task rejects by itself.
   piscina.on('error', () => undefined);
-  const run = async (task: ThreadTask): Promise<unknown> => {
-    const spectra = task.inputs.reduce((sum, input) => sum + input.spectra.length, 0);
-    const limitMs = options.taskBaseMs + spectra * options.taskMsPerSpectrum;
-    const limit = new AbortController();
-    const timer = setTimeout(() => {
-      limit.abort();
-    }, limitMs);
+  const run = async (task: ChunkTask | ExposureTask): Promise<unknown> => {
+    const beat = new SharedArrayBuffer(Int32Array.BYTES_PER_ELEMENT);
+    const watch = watchSteps(beat, options);
     try {
-      return await piscina.run(task, { signal: limit.signal });
+      return await piscina.run({ ...task, beat } satisfies ThreadTask, { signal: watch.signal });
     } catch (error) {
-      throw asThreadLost(error, limit.signal.aborted, limitMs, options.threadMegabytes);
+      throw asThreadLost(error, watch.exceededMs(), options.threadMegabytes);
     } finally {
-      clearTimeout(timer);
+      watch.end();
     }
   };
   return {
@@ -70,9 +67,49 @@ export function openMeasurePool(options: PoolOptions): MeasurePool {
   };
 }
 
-function asThreadLost(error: unknown, timedOut: boolean, limitMs: number, megabytes: number): unknown {
-  if (timedOut)
-    return new ThreadLost('time-limit', `the work must end within ${limitMs / 1000} s, and did not`);
+/** The thread has its task; its families are loaded: the first spectrum may begin. */
+const STEPS_OF_LOADING = 2;
+/** How often the steps of a thread are looked at. */
+const WATCH_MS = 100;
+
+/**
+ * Aborts when a thread takes too long over one step. Steps, not chunks, are timed: a chunk may be as long as it
+ * likes, and waiting for a thread to start is never held against a spectrum.
+ */
+function watchSteps(beat: SharedArrayBuffer, options: PoolOptions) {
+  const steps = new Int32Array(beat);
+  const controller = new AbortController();
+  let seen = 0;
+  let since = performance.now();
+  let exceeded: number | null = null;
+  const timer = setInterval(() => {
+    const now = performance.now();
+    const count = Atomics.load(steps, 0);
+    if (count !== seen) {
+      seen = count;
+      since = now;
+    }
+    const limit = count < STEPS_OF_LOADING ? options.loadLimitMs : options.spectrumLimitMs;
+    if (now - since > limit) {
+      exceeded = limit;
+      controller.abort();
+    }
+  }, WATCH_MS);
+  return {
+    signal: controller.signal,
+    exceededMs: () => exceeded,
+    end: () => {
+      clearInterval(timer);
+    },
+  };
+}
+
+function asThreadLost(error: unknown, exceededMs: number | null, megabytes: number): unknown {
+  if (exceededMs !== null)
+    return new ThreadLost(
+      'time-limit',
+      `a spectrum must take at most ${exceededMs / 1_000} s, and took longer`,
+    );
   const { code, message } = error as NodeJS.ErrnoException;
   if (code === 'ERR_WORKER_OUT_OF_MEMORY') {
     return new ThreadLost('memory-limit', `the work must fit in ${megabytes} MB, and did not`);

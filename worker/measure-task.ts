@@ -4,7 +4,7 @@ import type { ExposureContext } from '../pipeline/grid/index.ts';
 import { measureSpectrum } from '../pipeline/index.ts';
 import { type FamilyLibrary, loadFamilyLibrary } from '../templates/library.ts';
 import { measureChunk } from './measure-chunk.ts';
-import type { ChunkResult, ThreadTask } from './measure-contract.ts';
+import { type ChunkResult, countStep, type ThreadTask } from './measure-contract.ts';
 import { FAMILY_FILES, familyFolder } from './recipe.ts';
 import { contextOfExposure } from './sky-of-exposure.ts';
 
@@ -30,11 +30,17 @@ function loadedLibrary(): FamilyLibrary {
  * @returns a ChunkResult for a chunk, an ExposureContext for an exposure
  */
 export default function runTask(task: ThreadTask): ChunkResult | ExposureContext {
-  if (task.kind === 'exposure') return contextOfExposure(task);
+  const step = () => {
+    countStep(task.beat);
+  };
+  step();
+  if (task.kind === 'exposure') return contextOfExposure(task, step);
   const families = loadedLibrary();
+  step();
   return measureChunk(
     task,
     (spectrum, context, options, onStage) => measureSpectrum(spectrum, context, families, options, onStage),
     () => performance.now(),
+    step,
   );
 }

@@ -1,0 +1,6 @@
+import { practiceRun } from '../worker/practice-run.ts';
+
+/** A process of its own for the kill test: `run-practice-night.ts FOLDER WORKSPACE`. */
+const [folder, workspace] = process.argv.slice(2);
+const summary = await practiceRun(folder!, workspace!, { chunkSize: 3 });
+process.exitCode = summary.missing === 0 ? 0 : 1;

@@ -1,0 +1,22 @@
+import { cpSync } from 'node:fs';
+import { join } from 'node:path';
+import { openEmbeddedQueue } from '../../worker/queue.ts';
+import { makeWorkspace } from '../../worker/workspace.ts';
+import { freshFolder } from './practice-folder.ts';
+
+/** An empty queue, made once per test file: making one takes seconds, copying it does not. */
+let emptyQueue: Promise<string> | null = null;
+
+async function makeEmptyQueue(): Promise<string> {
+  const folder = join(freshFolder('queue'), 'jobs');
+  await (await openEmbeddedQueue(folder)).close();
+  return folder;
+}
+
+/** A new workspace of this test's own whose queue opens at once. */
+export async function freshWorkspace(): Promise<string> {
+  emptyQueue ??= makeEmptyQueue();
+  const { directory, queue } = makeWorkspace(freshFolder('workspace'));
+  cpSync(await emptyQueue, join(queue, 'jobs'), { recursive: true });
+  return directory;
+}
