@@ -1,14 +1,11 @@
 import { readFile } from 'node:fs/promises';
 import type { Command } from 'commander';
+import { EXIT, UsageFault } from './exit-status.ts';
 
 interface ScorecardOptions {
   readonly limits: string;
   readonly json?: boolean;
 }
-
-/** Exit status of wrong usage, and of a catalogue that lacks spectra the truth knows (documented in the README). */
-const WRONG_USAGE = 2;
-const NOT_COMPLETE = 1;
 
 /** Adds `shiftwork scorecard CATALOGUE TRUTH`: holds a catalogue against known truth. */
 export function registerScorecard(program: Command): void {
@@ -43,12 +40,11 @@ async function scorecard(catalogue: string, truth: string, options: ScorecardOpt
       limitsWith(options.limits),
     );
     process.stdout.write(options.json === true ? `${JSON.stringify(card, null, 2)}\n` : scorecardText(card));
-    return card.missing.length === 0 ? 0 : NOT_COMPLETE;
+    return card.missing.length === 0 ? EXIT.complete : EXIT.missing;
   } catch (error) {
     // What a person can put right: a file that is not there, a table that is not one.
     if (!(error instanceof RangeError) && !isMissingFile(error)) throw error;
-    console.error(error.message);
-    return WRONG_USAGE;
+    throw new UsageFault(error.message);
   }
 }
 

@@ -1,6 +1,7 @@
 import { mkdir, open, rename, stat, writeFile } from 'node:fs/promises';
 import { dirname, join } from 'node:path';
 import { type Command, InvalidArgumentError } from 'commander';
+import { UsageFault } from './exit-status.ts';
 import type { NightExposure, SimulatedTruth } from '../simulate/index.ts';
 
 interface SimulateOptions {
@@ -10,9 +11,6 @@ interface SimulateOptions {
   readonly fields?: number;
   readonly fibres?: number;
 }
-
-/** Status for wrong usage. */
-const WRONG_USAGE = 2;
 
 /** `shiftwork simulate`: writes practice nights of the Larkfield survey and, apart from them, their truth. */
 export function registerSimulate(program: Command): void {
@@ -29,15 +27,14 @@ export function registerSimulate(program: Command): void {
       '\nExample:\n  shiftwork simulate --out practice --fibres 80\n  shiftwork run practice/2031-04-02',
     )
     .action(async (options: SimulateOptions) => {
-      process.exitCode = await simulate(options);
+      await simulate(options);
     });
 }
 
-async function simulate({ out, ...chosen }: SimulateOptions): Promise<number> {
+async function simulate({ out, ...chosen }: SimulateOptions): Promise<void> {
   const truthFile = join(out, 'truth.csv');
   if (await exists(truthFile)) {
-    console.error(`${truthFile} exists: name a folder without a practice night, or remove this one`);
-    return WRONG_USAGE;
+    throw new UsageFault(`--out must be a folder without a practice night, but ${truthFile} exists`);
   }
   const { DEFAULT_SURVEY, HARROW_FELL, makersFrom, simulateNights, truthCsv, truthOf } = await import(
     '../simulate/index.ts'
@@ -57,13 +54,11 @@ async function simulate({ out, ...chosen }: SimulateOptions): Promise<number> {
     }
   } catch (error) {
     if (!(error instanceof RangeError)) throw error;
-    console.error(error.message);
-    return WRONG_USAGE;
+    throw new UsageFault(error.message);
   }
   // Written last: a folder with a truth table is whole.
   await writeFile(truthFile, truthCsv(truth));
   console.log(`${truthFile}: truth of ${truth.length} spectra`);
-  return 0;
 }
 
 /** Under another name until it is whole, so that nobody measures half a file by mistake. */
