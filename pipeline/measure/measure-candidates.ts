@@ -1,7 +1,7 @@
 import type { Family, Kind } from '../../templates/family.ts';
 import type { Measurement, MeasuredSpectrum } from './measurement.ts';
 import { refine } from './refine.ts';
-import { type Refit, Refitter } from './refit.ts';
+import { type Refit, Refitter, ROUNDS_TO_RANK } from './refit.ts';
 import type { RefitPixels } from './refit-pixels.ts';
 
 const SPEED_OF_LIGHT_KM_S = 299_792.458;
@@ -48,7 +48,7 @@ export function measureCandidates(
   const warm = new Map<string, readonly number[]>();
   const measurements: Measurement[] = [];
   for (const { family, redshift } of chosen) {
-    const refit = refitter.at(family, redshift, warm.get(family.refitSet));
+    const refit = refitter.at(family, redshift, warm.get(family.refitSet), ROUNDS_TO_RANK);
     warm.set(family.refitSet, refit.activeIndices);
     if (refit.active.length === 0) continue;
     measurements.push(unrefined(family, refit));

@@ -33,8 +33,10 @@ const PRICE: Readonly<Record<ComponentRole, number>> = {
   'broad-line': 3,
 };
 
-/** Alternations between amplitudes and polynomial; a third moved chi-square by less than 0.1 (solver note). */
+/** Alternations between amplitudes and polynomial; a third moved chi-square by less than 0.1. */
 const ROUNDS = 2;
+/** Alternations that are enough to rank hypotheses by; the leaders are refitted in full. */
+export const ROUNDS_TO_RANK = 1;
 
 /**
  * Refits one spectrum with physical components, amplitudes non-negative (Lawson & Hanson 1974), times a
@@ -64,8 +66,11 @@ export class Refitter {
     return known;
   }
 
-  /** @param start active components of a nearby redshift of the same refit set */
-  at(family: Family, redshift: number, start: readonly number[] = []): Refit {
+  /**
+   * @param start active components of a nearby redshift of the same refit set
+   * @param rounds alternations between amplitudes and polynomial
+   */
+  at(family: Family, redshift: number, start: readonly number[] = [], rounds = ROUNDS): Refit {
     const pixels = this.#pixels;
     const components = family.componentsAt(redshift);
     const columns = renderColumns(components, family.componentGrid, redshift, pixels, this.#columns);
@@ -75,7 +80,7 @@ export class Refitter {
     const factor = this.#factor.fill(1);
     let fit = solveNonNegative(columns, pixels.flux, pixels.weight, prices, start);
     let best = assemble(components, columns, fit, factor, pixels, redshift);
-    for (let round = 0; round < ROUNDS && fit.active.length > 0; round++) {
+    for (let round = 0; round < rounds && fit.active.length > 0; round++) {
       polynomial.factorFor(fit.model, factor);
       // data ≈ q·T·x with weight w is the same problem as data/q ≈ T·x with weight w·q².
       for (let i = 0; i < pixels.count; i++) {
