@@ -10,7 +10,7 @@ import {
 } from 'bullmq';
 import { createHash } from 'node:crypto';
 import { Redis } from 'ioredis';
-import { asEnvironmentFault } from '../store/index.ts';
+import { asEnvironmentFault, EnvironmentFault } from '../store/index.ts';
 import { chunkPayload, exposurePayload, type JobOrder, nightPayload } from './job-payloads.ts';
 import { openEmbeddedPool } from './pglite-backend.ts';
 
@@ -108,12 +108,21 @@ export async function openRedisQueue(url: string): Promise<WorkQueue> {
     retryStrategy: retryDelay,
   });
   // Without a listener a lost connection would end the process; BullMQ reports it through the worker.
-  connection.on('error', () => undefined);
+  const errors: Error[] = [];
+  connection.on('error', (error: Error) => {
+    errors.push(error);
+    errors.splice(0, errors.length - 1);
+  });
   try {
     await connection.connect();
   } catch (error) {
     connection.disconnect();
-    throw asEnvironmentFault(error);
+    // The promise only says that the connection is closed; the event before it says why.
+    const why = errors[0] ?? (error as Error);
+    const known = asEnvironmentFault(why);
+    throw known instanceof EnvironmentFault
+      ? known
+      : new EnvironmentFault(`the queue's server cannot be used: ${why.message}`, why);
   }
   return queueOver({
     makeQueue: () =>
