@@ -1,10 +1,11 @@
 import { Command } from 'commander';
-import { readFileSync } from 'node:fs';
 import { registerConfig } from './config.ts';
 import { registerEnqueue } from './enqueue.ts';
 import { registerInspect } from './inspect.ts';
+import { programVersion } from './program-version.ts';
 import { registerReport } from './report.ts';
 import { registerRequeue } from './requeue.ts';
+import { registerReview } from './review.ts';
 import { registerRun } from './run.ts';
 import { registerScorecard } from './scorecard.ts';
 import { registerSimulate } from './simulate.ts';
@@ -28,6 +29,7 @@ export function createProgram(): Command {
     registerWork,
     registerStatus,
     registerReport,
+    registerReview,
     registerRequeue,
     registerInspect,
     registerSimulate,
@@ -40,22 +42,6 @@ export function createProgram(): Command {
   }
   for (const verb of program.commands) verb.exitOverride();
   return program;
-}
-
-/** The version in package.json, which stands one folder above the sources and two above the compiled program. */
-export function programVersion(): string {
-  for (const place of ['../package.json', '../../package.json']) {
-    try {
-      const { name, version } = JSON.parse(readFileSync(new URL(place, import.meta.url), 'utf8')) as {
-        name: string;
-        version: string;
-      };
-      if (name === 'shiftwork') return version;
-    } catch {
-      // Not here: the next place, then the answer below.
-    }
-  }
-  return 'unknown';
 }
 
 const EXAMPLES = `

@@ -3,7 +3,7 @@ import type { OperatingOptions } from '../config/operating.ts';
 import type { Configuration } from '../config/resolve.ts';
 import type { Json } from '../store/index.ts';
 import type { PoolOptions } from '../worker/index.ts';
-import { programVersion } from './program.ts';
+import { programVersion } from './program-version.ts';
 
 /** Options of the thread pool from the configuration. */
 export function poolOptions(operating: OperatingOptions): PoolOptions {

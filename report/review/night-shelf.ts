@@ -60,7 +60,7 @@ export async function countsOfNights(
     for (const { name } of await store.nights()) counts.set(name, await store.counts(name));
     return counts;
   });
-  return Promise.all(nights.map((night) => stored?.get(night.name) ?? recordedCounts(night.directory)));
+  return nights.map(async (night) => stored?.get(night.name) ?? (await recordedCounts(night.directory)));
 }
 
 /** Opened for each look, so that a page shows what another process has just written. */
