@@ -60,7 +60,9 @@ export async function countsOfNights(
     for (const { name } of await store.nights()) counts.set(name, await store.counts(name));
     return counts;
   });
-  return nights.map(async (night) => stored?.get(night.name) ?? (await recordedCounts(night.directory)));
+  return Promise.all(
+    nights.map(async (night) => stored?.get(night.name) ?? (await recordedCounts(night.directory))),
+  );
 }
 
 /** Opened for each look, so that a page shows what another process has just written. */
