@@ -20,18 +20,14 @@ interface Example {
   readonly right: boolean;
 }
 
-/** What the confidence of each kind may depend on: few, because the wrong answers to learn from are few. */
+/**
+ * What the confidence of each kind may depend on: few, because the wrong answers to learn from are few, and none
+ * whose weight came out with a sign that makes no sense.
+ */
 const USED: Readonly<Record<Kind, readonly string[]>> = {
-  galaxy: [
-    'lnMargin',
-    'lnMarginOverNone',
-    'lnReducedChiSquare',
-    'correlationAgrees',
-    'correlationR',
-    'emissionLines',
-  ],
-  quasar: ['lnMargin', 'lnMarginOverNone', 'lnReducedChiSquare', 'correlationAgrees', 'lnStrongestLine'],
-  star: ['lnMargin', 'lnMarginOverNone', 'lnReducedChiSquare', 'correlationAgrees', 'correlationR'],
+  galaxy: ['lnMargin', 'lnReducedChiSquare', 'correlationAgrees', 'correlationR'],
+  quasar: ['lnMargin', 'lnReducedChiSquare', 'correlationAgrees', 'lnStrongestLine'],
+  star: ['lnMargin', 'lnMarginOverNone', 'lnReducedChiSquare', 'correlationR'],
 };
 /** Prior width of a weight of about 1.4: features are of order one. */
 const RIDGE = 0.5;
