@@ -51,48 +51,66 @@ function plotPlaceholder(plot: PlotState): Markup {
     embedded: 'The plot appears here when the page may run its script.',
     'left-out':
       'Not plotted: this report is at its size limit. Write it again with a higher limit to see the plot.',
-    'not-kept': 'Not plotted: no curves were kept for this spectrum.',
+    'not-kept': 'Nothing to plot: no curves were kept for this spectrum.',
   }[plot];
   return html`<p class="no-plot">${sentence}</p>`;
 }
 
+/** What is known of the row; what is missing is left out, so that an unreadable row is short. */
 function facts(row: CatalogueRow): Markup {
+  const when = (value: unknown, shown: () => Insert): Insert => (value === null ? null : shown());
   const entries: readonly (readonly [string, Insert])[] = [
-    ['template family', row.family ?? MISSING],
+    ['template family', row.family],
     [
       'probabilities',
-      `galaxy ${percent(row.probability_galaxy)}, quasar ${percent(row.probability_quasar)}, star ${percent(row.probability_star)}, none ${percent(row.probability_none)}`,
+      when(
+        row.probability_none,
+        () =>
+          `galaxy ${percent(row.probability_galaxy)}, quasar ${percent(row.probability_quasar)}, star ${percent(row.probability_star)}, none ${percent(row.probability_none)}`,
+      ),
     ],
-    ['signal-to-noise per ångström', fixed(row.signal_to_noise_per_angstrom, 2)],
+    [
+      'signal-to-noise per ångström',
+      when(row.signal_to_noise_per_angstrom, () => fixed(row.signal_to_noise_per_angstrom, 2)),
+    ],
     [
       'magnitude',
-      row.magnitude === null
-        ? MISSING
-        : html`${fixed(row.magnitude, 2)} ${row.magnitude_band === null ? '' : outside(row.magnitude_band)}`,
+      when(row.magnitude, () => [fixed(row.magnitude, 2), ' ', outside(row.magnitude_band ?? '')]),
     ],
-    ['chi-square / degrees of freedom', `${fixed(row.chi_square, 0)} / ${row.degrees_of_freedom ?? MISSING}`],
-    ['chi-square margin to runner-up', fixed(row.chi_square_margin, 1)],
-    ['correlation peak, r', `${fixed(row.correlation_peak, 2)}, ${fixed(row.correlation_r, 1)}`],
     [
-      'emission lines found',
-      `${row.lines_detected ?? MISSING} (strongest ${fixed(row.strongest_line_snr, 1)} sigma)`,
+      'chi-square / degrees of freedom',
+      when(row.chi_square, () => `${fixed(row.chi_square, 0)} / ${row.degrees_of_freedom ?? MISSING}`),
     ],
-    ['usable pixels', percent(row.good_fraction)],
-    ['stated errors × factor = scatter', fixed(row.noise_factor, 2)],
+    ['chi-square margin to runner-up', when(row.chi_square_margin, () => fixed(row.chi_square_margin, 1))],
     [
-      'barycentric correction',
-      row.barycentric_correction_km_s === null
-        ? (row.barycentric_source ?? MISSING)
-        : `${fixed(row.barycentric_correction_km_s, 2)} km/s (${row.barycentric_source ?? MISSING})`,
+      'correlation peak, r',
+      when(row.correlation_peak, () => `${fixed(row.correlation_peak, 2)}, ${fixed(row.correlation_r, 1)}`),
     ],
-    ['position (ICRS)', `${fixed(row.ra, 5)}°, ${fixed(row.dec, 5)}°`],
-    ['observed, exposure', html`${row.observed_at ?? MISSING}, ${fixed(row.exposure_s, 0)} s`],
+    ['emission lines found', row.lines_detected],
+    ['strongest line, sigma', when(row.strongest_line_snr, () => fixed(row.strongest_line_snr, 1))],
+    ['usable pixels', when(row.good_fraction, () => percent(row.good_fraction))],
+    ['stated errors × factor = scatter', when(row.noise_factor, () => fixed(row.noise_factor, 2))],
+    ['barycentric correction', barycentric(row)],
+    ['position (ICRS)', when(row.ra, () => `${fixed(row.ra, 5)}°, ${fixed(row.dec, 5)}°`)],
+    ['observed at, UTC', row.observed_at],
+    ['exposure', when(row.exposure_s, () => `${fixed(row.exposure_s, 0)} s`)],
     [
       'input',
-      html`${outside(row.input_file)}, HDU ${row.input_hdu ?? MISSING}, row ${row.input_row ?? MISSING}`,
+      [
+        outside(row.input_file),
+        row.input_hdu === null ? null : `, HDU ${row.input_hdu}`,
+        row.input_row === null ? null : `, row ${row.input_row}`,
+      ],
     ],
   ];
-  return html`<dl>${entries.map(([name, value]) => html`<div><dt>${name}</dt><dd>${value}</dd></div>`)}</dl>`;
+  return html`<dl>${entries
+    .filter(([, value]) => value !== null)
+    .map(([name, value]) => html`<div><dt>${name}</dt><dd>${value}</dd></div>`)}</dl>`;
+}
+
+function barycentric(row: CatalogueRow): Insert {
+  if (row.barycentric_correction_km_s === null) return row.barycentric_source;
+  return `${fixed(row.barycentric_correction_km_s, 2)} km/s (${row.barycentric_source ?? MISSING})`;
 }
 
 function candidateTable(candidates: readonly CandidateSummary[]): Markup | null {

@@ -30,6 +30,7 @@ caption{text-align:left;font-weight:600;padding-bottom:4px}
 th,td{text-align:left;padding:4px 12px 4px 0;border-bottom:1px solid var(--rule);vertical-align:top;font-weight:400;overflow-wrap:anywhere}
 thead th{color:var(--muted);font-size:13px;overflow-wrap:normal}
 .number{text-align:right;font-variant-numeric:tabular-nums;white-space:nowrap}
+.counts tbody th{min-width:8.5em}
 svg.bar{width:120px;height:10px;display:inline-block}
 .unseen{position:absolute;width:1px;height:1px;overflow:hidden;clip-path:inset(50%)}
 .chart{margin:0;background:var(--card);border:1px solid var(--rule);border-radius:3px;padding:12px 14px 8px}
@@ -77,5 +78,5 @@ code,pre{font:13px/1.4 ui-monospace,"DejaVu Sans Mono",monospace}pre{white-space
 .key input{margin:0 2px 0 0;vertical-align:middle}.hint{color:var(--muted)}
 .folded .body{display:none}.folded .card{margin-bottom:6px;padding:8px 14px;contain-intrinsic-size:auto 90px}
 @media (max-width:900px){.body{grid-template-columns:1fr}}
-@media print{body{max-width:none;padding:0;background:#fff;font-size:11px}.card,.chart,tr{break-inside:avoid}.card{content-visibility:visible}#controls,.hint,noscript{display:none}h2{break-after:avoid}.body{grid-template-columns:1fr}.plots{zoom:.82}.facts dl{columns:2}}
+@media print{*{print-color-adjust:exact}svg.bar{width:70px}body{max-width:none;padding:0;background:#fff;font-size:11px}.pair{grid-template-columns:1fr 1fr;gap:12px}h2{margin-top:22px}.tiles{grid-template-columns:repeat(6,1fr);gap:6px}.tile{padding:6px 8px}.tile strong{font-size:20px}.lead{font-size:14px}.card,.chart,tr{break-inside:avoid}.card{content-visibility:visible}#controls,.hint,noscript{display:none}h2{break-after:avoid}.body{grid-template-columns:1fr}.plots{zoom:.82}.facts dl{columns:2}}
 `;
