@@ -10,12 +10,15 @@ const WIDTH_KM_S: Readonly<Record<LineNature, number>> = { narrow: 80, broad: 1_
 /** A line is measured when this share of its weighted window carries data. */
 const LEAST_COVERAGE = 0.6;
 
-/** Which lines are worth measuring in which kind of object. */
-const NATURES: Readonly<Record<Kind, readonly LineNature[]>> = {
-  galaxy: ['narrow', 'absorption'],
-  quasar: ['broad', 'narrow'],
-  star: ['narrow', 'absorption'],
-};
+/** Below this the lines that are broad in quasars are narrow in distant galaxies, Lyα first of all. */
+const ULTRAVIOLET_ANGSTROM = 2_000;
+
+/** As what a line is measured in a kind of object; null = not at all. */
+function seenAs(rest: RestLine, kind: Kind): LineNature | null {
+  if (rest.nature === 'absorption') return kind === 'quasar' ? null : 'absorption';
+  if (rest.nature === 'narrow' || kind === 'quasar') return rest.nature;
+  return kind === 'galaxy' && rest.wavelengthVacuumAngstrom < ULTRAVIOLET_ANGSTROM ? 'narrow' : null;
+}
 
 /**
  * Measures every listed line that falls on usable pixels at the refit's redshift: the linear amplitude of a
@@ -33,11 +36,11 @@ export function measureLines(
   lineSpreadSigmaKmS: number,
   noiseInflation: number,
 ): LineMeasurement[] {
-  const natures = NATURES[kind];
   const found: LineMeasurement[] = [];
   for (const rest of REST_LINES) {
-    if (!natures.includes(rest.nature)) continue;
-    const one = measureLine(pixels, refit, rest, lineSpreadSigmaKmS, noiseInflation);
+    const nature = seenAs(rest, kind);
+    if (nature === null) continue;
+    const one = measureLine(pixels, refit, { ...rest, nature }, lineSpreadSigmaKmS, noiseInflation);
     if (one) found.push(one);
   }
   return found;

@@ -1,6 +1,7 @@
 import type { Case } from './case.ts';
 import { SAME_REDSHIFT_KM_S, separationKmS } from './evidence.ts';
 import { emissionLines } from './reasons/emission.ts';
+import { loneLine } from './reasons/line-evidence.ts';
 
 /** Margins beyond this add nothing to what is known: the data the calibration was fitted on end there. */
 const LARGEST_MARGIN = 2_000;
@@ -24,6 +25,7 @@ export function featuresOf(one: Case): Record<string, number> {
     correlationR: Math.min(Math.max(secondOpinion.rAtAnswer, 0), 20),
     emissionLines: Math.min(emission.length, 6),
     lnStrongestLine: Math.log1p(Math.max(0, ...emission.map((l) => Math.min(l.signalToNoise, 100)))),
+    restsOnOneLine: loneLine(one) ? 1 : 0,
     goodFraction: one.goodFraction,
     noiseEstimated: one.noiseEstimated ? 1 : 0,
   };
