@@ -15,6 +15,9 @@ const DIST = join(ROOT, 'dist');
 /** What the compiler consumes, and what is for readers only; everything else is read at run time. */
 const NOT_COPIED = new Set(['.ts', '.md']);
 
+/** Everybody may read, the owner may write. */
+const READABLE = 0o644;
+
 function compile(...options) {
   const tsc = join(ROOT, 'node_modules/typescript/bin/tsc');
   const run = spawnSync(process.execPath, [tsc, ...options], { cwd: ROOT, stdio: 'inherit' });
@@ -42,12 +45,23 @@ for (const name of SOURCE_FOLDERS.flatMap((folder) => filesUnder(ROOT, folder)))
   copied++;
 }
 
+await prepareQueue();
 const command = join(NEXT, 'cli/main.js');
 if (existsSync(command)) chmodSync(command, 0o755);
 writeFileSync(join(NEXT, '.built'), `${hash}\n`);
 rmSync(DIST, { recursive: true, force: true });
 renameSync(NEXT, DIST);
 console.log(`build: dist/ is new, ${copied} data files copied, ${seconds(started)} s`);
+
+/** Leaves an empty queue beside the code that copies it into new workspaces: making one costs seconds. */
+async function prepareQueue() {
+  const { openEmbeddedQueue } = await import(join(NEXT, 'worker/queue.js'));
+  const { PREPARED_QUEUE } = await import(join(NEXT, 'worker/prepared-queue.js'));
+  const folder = join(NEXT, 'worker', PREPARED_QUEUE);
+  await (await openEmbeddedQueue(folder)).close();
+  // The database keeps some files to its owner; whoever runs the program must be able to copy them.
+  for (const name of filesUnder(folder, '.')) chmodSync(join(folder, name), READABLE);
+}
 
 function seconds(since) {
   return ((performance.now() - since) / 1000).toFixed(1);

@@ -17,6 +17,7 @@ import { openMeasurePool, type PoolOptions } from './measure-pool.ts';
 import { recipeHashOf } from './night-settings.ts';
 import { ownQueue } from './owner-lock.ts';
 import { type NightPlan, planNight } from './plan-night.ts';
+import { layOutQueue } from './prepared-queue.ts';
 import { openEmbeddedQueue, type WorkQueue } from './queue.ts';
 import { tendNight } from './tend-night.ts';
 import { makeWorkspace, type Workspace } from './workspace.ts';
@@ -199,6 +200,7 @@ async function measureMissing(
 /** Opens the embedded queue empty: whatever an earlier owner left is known better by the store. */
 export async function openOwnQueue(directory: string, log: WorkLog): Promise<WorkQueue> {
   const folder = `${directory}/jobs`;
+  layOutQueue(folder);
   try {
     const queue = await openEmbeddedQueue(folder);
     await queue.clear();
@@ -209,6 +211,7 @@ export async function openOwnQueue(directory: string, log: WorkLog): Promise<Wor
       'the queue was damaged and is made anew; the store has all that matters',
     );
     rmSync(folder, { recursive: true, force: true });
+    layOutQueue(folder);
     return openEmbeddedQueue(folder);
   }
 }

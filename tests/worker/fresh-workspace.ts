@@ -1,5 +1,5 @@
-import { cpSync } from 'node:fs';
 import { join } from 'node:path';
+import { layOutQueue } from '../../worker/prepared-queue.ts';
 import { openEmbeddedQueue } from '../../worker/queue.ts';
 import { makeWorkspace } from '../../worker/workspace.ts';
 import { freshFolder } from './practice-folder.ts';
@@ -17,6 +17,6 @@ async function makeEmptyQueue(): Promise<string> {
 export async function freshWorkspace(): Promise<string> {
   emptyQueue ??= makeEmptyQueue();
   const { directory, queue } = makeWorkspace(freshFolder('workspace'));
-  cpSync(await emptyQueue, join(queue, 'jobs'), { recursive: true });
+  layOutQueue(join(queue, 'jobs'), await emptyQueue);
   return directory;
 }

@@ -1,4 +1,7 @@
+import { existsSync, renameSync } from 'node:fs';
+import { join } from 'node:path';
 import { beforeAll, expect, it } from 'vitest';
+import { workspaceAt } from '../../worker/workspace.ts';
 import { freshWorkspace } from './fresh-workspace.ts';
 import { practiceFolder } from './practice-folder.ts';
 import { practiceRun, rowsOf } from './practice-run.ts';
@@ -29,9 +32,13 @@ it('runNight() hands the noise of the exposure to every spectrum of it and to no
   expect([...factors('single')]).toEqual([0]);
 });
 
-it('runNight() measures nothing the second time and says so', async () => {
+it('runNight() measures nothing the second time, says so, and does not even start the queue', async () => {
+  const jobs = join(workspaceAt(workspace).queue, 'jobs');
+  renameSync(jobs, `${jobs}-aside`);
   const again = await practiceRun(folder, workspace);
   expect(again).toMatchObject({ measured: 0, missing: 0 });
+  expect(existsSync(jobs)).toBe(false);
+  renameSync(`${jobs}-aside`, jobs);
 });
 
 it('runNight() measures everything again when asked, and gets the same rows', async () => {
