@@ -25,7 +25,7 @@ interface Example {
  * whose weight came out with a sign that makes no sense.
  */
 const USED: Readonly<Record<Kind, readonly string[]>> = {
-  galaxy: ['lnMargin', 'lnReducedChiSquare', 'correlationAgrees', 'correlationR', 'restsOnOneLine'],
+  galaxy: ['lnMargin', 'lnReducedChiSquare', 'correlationAgrees', 'restsOnOneLine'],
   quasar: ['lnMargin', 'lnReducedChiSquare', 'correlationAgrees', 'lnStrongestLine'],
   star: ['lnMargin', 'lnMarginOverNone', 'lnReducedChiSquare', 'correlationR'],
 };
