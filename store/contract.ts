@@ -1,5 +1,6 @@
 import type { Layout } from '../pipeline/decode/layout.ts';
 import type { Role, Site } from '../pipeline/decode/spectrum.ts';
+import type { TargetRow } from '../pipeline/decode/target-row.ts';
 import type { InputFaultCode } from '../pipeline/errors.ts';
 import type { ExposureContext } from '../pipeline/grid/exposure-context.ts';
 import type { Answer, Reason } from '../pipeline/weigh/answer.ts';
@@ -51,6 +52,12 @@ export interface ExpectedSpectrum {
   readonly ordinal: number;
   readonly hdu: number | null;
   readonly row: number | null;
+}
+
+/** An expected spectrum with what a table of the file says of its target, before a pixel is read. */
+export interface PlannedSpectrum extends ExpectedSpectrum {
+  /** Null where the file has no such table: only reading the spectrum can tell. */
+  readonly target: TargetRow | null;
 }
 
 /** What the file says about a spectrum, kept with its row. */
@@ -190,7 +197,7 @@ export interface Store {
    * Records an input and the spectra expected of it, replacing what an earlier plan expected of the same
    * input. Measurements are kept: they stop being current when the sha256 differs.
    */
-  savePlan(input: InputRecord, spectra: readonly ExpectedSpectrum[]): Promise<void>;
+  savePlan(input: InputRecord, spectra: readonly PlannedSpectrum[]): Promise<void>;
   inputs(night: string): Promise<readonly InputRecord[]>;
   input(inputId: string): Promise<InputRecord | null>;
   /** Spectra without a current row: never measured under the recipe, measured from other bytes, or requeued. */

@@ -1,5 +1,6 @@
 import { type Kysely, sql } from 'kysely';
 import type { Layout } from '../pipeline/decode/layout.ts';
+import type { TargetRow } from '../pipeline/decode/target-row.ts';
 import type { InputFaultCode } from '../pipeline/errors.ts';
 import { byCodeUnit } from './by-code-unit.ts';
 import type {
@@ -9,8 +10,9 @@ import type {
   NightRecord,
   OrdinalRange,
   PendingSpectrum,
+  PlannedSpectrum,
 } from './contract.ts';
-import { storedJson } from './finite-or-null.ts';
+import { finiteOrNull, storedJson } from './finite-or-null.ts';
 import { inBatches } from './in-batches.ts';
 import type { Database, InputTable } from './schema.ts';
 
@@ -43,10 +45,15 @@ export async function listNights(db: Kysely<Database>): Promise<readonly NightRe
 export async function savePlan(
   db: Kysely<Database>,
   input: InputRecord,
-  expected: readonly ExpectedSpectrum[],
+  expected: readonly PlannedSpectrum[],
 ): Promise<void> {
   const row = inputRow(input);
   await db.transaction().execute(async (transaction) => {
+    const known = await transaction
+      .selectFrom('inputs')
+      .select('sha256')
+      .where('id', '=', input.id)
+      .executeTakeFirst();
     await transaction
       .insertInto('inputs')
       .values(row)
@@ -66,8 +73,8 @@ export async function savePlan(
           spectrum_id === now.spectrumId && ordinal === now.ordinal && hdu === now.hdu && row === now.row
         );
       });
-    // What the file says about its spectra is kept when nothing moved.
-    if (sameAsBefore) return;
+    // What was read of the spectra is kept when the file is the same.
+    if (sameAsBefore && known?.sha256 === input.sha256) return;
     await transaction.deleteFrom('spectra').where('input_id', '=', input.id).execute();
     const rows = expected.map((spectrum) => ({
       spectrum_id: spectrum.spectrumId,
@@ -76,10 +83,24 @@ export async function savePlan(
       ordinal: spectrum.ordinal,
       hdu: spectrum.hdu,
       row: spectrum.row,
-      role: 'target',
+      ...targetColumns(spectrum.target),
     }));
     for (const batch of inBatches(rows)) await transaction.insertInto('spectra').values(batch).execute();
   });
+}
+
+/** Kept from the plan on, so that a spectrum nobody can read is still known by its target. */
+function targetColumns(target: TargetRow | null) {
+  return {
+    target_name: target?.name ?? null,
+    ra: finiteOrNull(target?.raDeg),
+    dec: finiteOrNull(target?.decDeg),
+    fibre: target?.fibre ?? null,
+    role: target?.role ?? 'target',
+    target_class: target?.targetClass ?? null,
+    magnitude: finiteOrNull(target?.magnitude),
+    magnitude_band: target?.magnitude === null ? null : (target?.magnitudeBand ?? null),
+  };
 }
 
 function inputRow(input: InputRecord): InputTable {

@@ -4,8 +4,10 @@ import {
   type Layout,
   openInput,
   readSpectra,
+  readTargets,
   recogniseLayout,
   type Spectrum,
+  type TargetRow,
 } from '../pipeline/decode/index.ts';
 import { InputFault } from '../pipeline/errors.ts';
 import { type FileState, hashFile, openFile } from './input-file.ts';
@@ -21,6 +23,8 @@ export interface InspectedInput {
   readonly fault: InputFault | null;
   /** The first spectrum that can be read: its exposure, time and site stand for the file's. */
   readonly example: Spectrum | null;
+  /** What a table of the file says each spectrum is of, by ordinal; empty where none was looked for. */
+  readonly targets: readonly TargetRow[];
 }
 
 /** A file nobody could stat has this state; it will differ from whatever is found later. */
@@ -34,7 +38,15 @@ const MOST_EXAMPLES = 8;
  * fault is part of what is learned.
  */
 export async function inspectInput(file: FoundFile, profile: InputProfile | null): Promise<InspectedInput> {
-  const nothing = { file, state: NO_STATE, sha256: null, layout: null, fault: null, example: null };
+  const nothing = {
+    file,
+    state: NO_STATE,
+    sha256: null,
+    layout: null,
+    fault: null,
+    example: null,
+    targets: [],
+  };
   let hashed: { sha256: string; state: FileState };
   try {
     hashed = await hashFile(file.path, file.relativePath);
@@ -52,7 +64,8 @@ export async function inspectInput(file: FoundFile, profile: InputProfile | null
         const [spectrum] = readSpectra(input, layout, row, 1);
         if (spectrum !== undefined && !(spectrum instanceof InputFault)) example = spectrum;
       }
-      return { ...nothing, ...hashed, layout, example };
+      const targets = readTargets(input, layout, 0, layout.rowCount);
+      return { ...nothing, ...hashed, layout, example, targets };
     } finally {
       opened.close();
     }

@@ -1,7 +1,7 @@
 import { createHash } from 'node:crypto';
 import { basename } from 'node:path';
 import type { InputProfile } from '../config/profile.ts';
-import type { ExpectedSpectrum, InputRecord } from '../store/index.ts';
+import type { InputRecord, PlannedSpectrum } from '../store/index.ts';
 import { inspectInput, type InspectedInput, isBystander } from './inspect-input.ts';
 import { observingNight } from './night-name.ts';
 import { expectedSpectra, fileNames } from './spectrum-id.ts';
@@ -13,7 +13,7 @@ const FEWEST_OF_AN_EXPOSURE = 3;
 /** A night before it is in the store: every spectrum that must end with a row. */
 export interface NightPlan {
   readonly night: string;
-  readonly inputs: readonly { readonly input: InputRecord; readonly spectra: readonly ExpectedSpectrum[] }[];
+  readonly inputs: readonly { readonly input: InputRecord; readonly spectra: readonly PlannedSpectrum[] }[];
   /** Files that lay beside the spectra, with why they are not taken for spectra. */
   readonly leftOut: readonly { readonly relativePath: string; readonly why: string }[];
 }
@@ -63,7 +63,7 @@ export async function planNight(request: PlanRequest): Promise<NightPlan> {
       fault: one.fault === null ? null : { code: one.fault.code, detail: one.fault.message },
       exposureKey: exposures[i]!,
     };
-    return { input, spectra: expectedSpectra(night, names[i]!, id, one.layout) };
+    return { input, spectra: expectedSpectra(night, names[i]!, id, one.layout, one.targets) };
   });
   return { night, inputs, leftOut };
 }

@@ -1,5 +1,6 @@
 import type { Layout } from '../pipeline/decode/layout.ts';
-import type { ExpectedSpectrum } from '../store/index.ts';
+import type { TargetRow } from '../pipeline/decode/target-row.ts';
+import type { PlannedSpectrum } from '../store/index.ts';
 
 /** `.fits`, `.csv.gz` and the like: an ending of letters and digits, and the `.gz` that may follow. */
 const ENDING = /\.[A-Za-z][A-Za-z0-9]*(\.gz)?$/i;
@@ -31,15 +32,18 @@ export function fileNames(
 /**
  * The spectra a file promises: `night/name#HDU.row`, or `night/name#HDU` where an HDU holds one spectrum.
  * A file of which nothing could be recognised promises one row that says so: `night/name`.
+ *
+ * @param targets what a table of the file says of each spectrum, by ordinal; may be shorter than the file
  */
 export function expectedSpectra(
   night: string,
   name: string,
   inputId: string,
   layout: Layout | null,
-): ExpectedSpectrum[] {
+  targets: readonly TargetRow[],
+): PlannedSpectrum[] {
   if (layout === null) {
-    return [{ spectrumId: `${night}/${name}`, inputId, ordinal: 0, hdu: null, row: null }];
+    return [{ spectrumId: `${night}/${name}`, inputId, ordinal: 0, hdu: null, row: null, target: null }];
   }
   const hdu = layout.arms[0]?.flux.hdu ?? 0;
   const byRow = layout.form === 'row-stack' || layout.form === 'table-row-per-spectrum';
@@ -49,5 +53,6 @@ export function expectedSpectra(
     ordinal,
     hdu,
     row: byRow ? ordinal : null,
+    target: targets[ordinal] ?? null,
   }));
 }

@@ -2,6 +2,7 @@ import { appendFileSync, mkdirSync, rmSync, truncateSync, writeFileSync } from '
 import { join } from 'node:path';
 import { expect, it } from 'vitest';
 import {
+  BLIND,
   ENDS_ITS_THREAD,
   exposureFile,
   freshFolder,
@@ -30,6 +31,21 @@ it('a truncated file, an empty one and a broken gzip each end as a row that says
   expect(rows.filter(({ input_file, kind }) => input_file === 'early.fits' && kind !== null)).toHaveLength(
     12,
   );
+});
+
+it('a row without one usable pixel, and one that is set aside, are still known by their target and fibre', async () => {
+  const folder = join(freshFolder('night'), 'blind');
+  mkdirSync(folder);
+  const levels = [100, BLIND, ENDS_ITS_THREAD, 110, 0, 0, 0, BLIND];
+  writeFileSync(join(folder, 'one.fits'), exposureFile('one', levels, 5));
+  const workspace = await freshWorkspace();
+  await practiceRun(folder, workspace);
+  const faults = (await rowsOf(workspace)).filter(({ reasons }) => reasons !== '');
+  expect(faults).toMatchObject([
+    { reasons: 'unreadable', target_name: 'one-target-1', fibre: 1, role: 'target' },
+    { reasons: 'over-limits', target_name: 'one-target-2', fibre: 2, role: 'target' },
+    { reasons: 'unreadable', target_name: 'one-sky-7', fibre: 7, role: 'sky' },
+  ]);
 });
 
 it.each([

@@ -1,5 +1,5 @@
 import { afterEach, beforeEach, describe, expect, it } from 'vitest';
-import type { ExpectedSpectrum, InputRecord, Outcome, Store } from '../../store/index.ts';
+import type { InputRecord, Outcome, PlannedSpectrum, Store } from '../../store/index.ts';
 import { fabricatedAnswer } from './fabricated-outcome.ts';
 
 const RECIPE = 'a'.repeat(64);
@@ -22,12 +22,18 @@ const INPUT: InputRecord = {
   exposureKey: 'exposure 7',
 };
 
-const SPECTRA: readonly ExpectedSpectrum[] = [2, 10, 1].map((row, ordinal) => ({
+const TARGET = {
+  ...{ name: 'field star 4', raDeg: 150.25, decDeg: -2.5, fibre: 17, role: 'calibration' as const },
+  ...{ targetClass: 'flux standard', magnitude: 16.5, magnitudeBand: 'r' },
+};
+
+const SPECTRA: readonly PlannedSpectrum[] = [2, 10, 1].map((row, ordinal) => ({
   spectrumId: `${NIGHT}/one#1.${row}`,
   inputId: INPUT.id,
   ordinal,
   hdu: 1,
   row,
+  target: row === 10 ? TARGET : null,
 }));
 
 const outcome = (index: number, changes: Partial<Outcome> = {}): Outcome => ({
@@ -70,6 +76,18 @@ export function storeContract(backend: string, open: () => Promise<Store>): void
         `${NIGHT}/one#1.2`,
       ]);
       expect(await store.counts(NIGHT)).toEqual({ expected: 3, done: 0, faults: 0, needsReview: 0 });
+    });
+
+    it('knows a spectrum that nobody can read by the target the plan named', async () => {
+      const fault = { word: 'unreadable', code: 'no-usable-pixels', detail: 'none' } as const;
+      await save([outcome(1, { result: { fault } })]);
+      expect(await store.rows(NIGHT)).toMatchObject([
+        {
+          ...{ target_name: 'field star 4', ra: 150.25, dec: -2.5, fibre: 17, role: 'calibration' },
+          ...{ target_class: 'flux standard', magnitude: 16.5, magnitude_band: 'r' },
+          ...{ reasons: 'unreadable', redshift: null },
+        },
+      ]);
     });
 
     it('takes a spectrum off the pending list when its row is written, and only under that recipe', async () => {

@@ -15,6 +15,8 @@ const SKY_ROWS = 4;
 export const NEVER_ENDS = 6_660;
 export const ENDS_ITS_THREAD = 6_661;
 export const THROWS = 6_662;
+/** A flux level whose pixels all carry no weight, so that the row cannot be read. */
+export const BLIND = 6_663;
 
 /** A new empty folder of this test's own. */
 export function freshFolder(name: string): string {
@@ -30,6 +32,9 @@ export function exposureFile(name: string, levels: readonly number[], seed: numb
     // Bad rows must be known by their mean exactly; good ones carry noise.
     return level >= NEVER_ENDS ? level : level + random.normal();
   });
+  const weights = Float32Array.from({ length: rows * PIXELS }, (_, i) =>
+    levels[Math.floor(i / PIXELS)] === BLIND ? 0 : 1,
+  );
   const axes = [PIXELS, rows];
   const cards = [
     { keyword: 'CTYPE1', value: 'WAVE' },
@@ -43,7 +48,7 @@ export function exposureFile(name: string, levels: readonly number[], seed: numb
   return encodeFits([
     { type: 'image', axes: [] },
     { type: 'image', name: 'FLUX', axes, pixels: flux, unit: 'erg/s/cm2/Angstrom', cards },
-    { type: 'image', name: 'IVAR', axes, pixels: new Float32Array(rows * PIXELS).fill(1), cards },
+    { type: 'image', name: 'IVAR', axes, pixels: weights, cards },
     {
       type: 'table',
       name: 'FIBRES',

@@ -22,8 +22,8 @@ it('fileNames() never gives a name twice, even for equal paths under two roots',
 
 it('expectedSpectra() names a stacked row by HDU and row, a lone spectrum by its HDU, a broken file by its name', () => {
   const ids = (form: Layout['form'], rows: number) =>
-    expectedSpectra('n', 'f', 'id', layout(form, rows)).map(({ spectrumId }) => spectrumId);
+    expectedSpectra('n', 'f', 'id', layout(form, rows), []).map(({ spectrumId }) => spectrumId);
   expect(ids('row-stack', 2)).toEqual(['n/f#3.0', 'n/f#3.1']);
   expect(ids('image-one-spectrum', 1)).toEqual(['n/f#3']);
-  expect(expectedSpectra('n', 'f', 'id', null).map(({ spectrumId }) => spectrumId)).toEqual(['n/f']);
+  expect(expectedSpectra('n', 'f', 'id', null, []).map(({ spectrumId }) => spectrumId)).toEqual(['n/f']);
 });
