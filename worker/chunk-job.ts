@@ -12,6 +12,12 @@ import type { WorkerContext } from './worker-context.ts';
 const WORKERS_ONE_SPECTRUM_MAY_COST = 3;
 
 /**
+ * Nights of up to this many spectra keep all curves (15 kB each): whatever the comparison of the whole night
+ * flags afterwards can then be plotted too. Larger ones keep those flagged by themselves and a sample.
+ */
+const ALL_CURVES_UP_TO = 2_000;
+
+/**
  * Measures the spectra of a chunk that still lack a current row and writes them in one transaction. Running
  * it twice changes nothing.
  *
@@ -52,6 +58,7 @@ export async function runChunk(
         inputs,
         context: noise,
         measuring,
+        keepAllCurves: (await store.counts(payload.night)).expected <= ALL_CURVES_UP_TO,
       });
       Object.assign(result, { outcomes, stageMs });
       for (const trouble of troubles) log.error(trouble, 'a measurement failed inside the program');

@@ -48,7 +48,7 @@ export function measureChunk(
     const facts = factsOf(read);
     try {
       const { answer, curves } = measure(read, task.context, task.measuring, onStage);
-      const keep = answer.needsReview || inSample(spectrumId);
+      const keep = task.keepAllCurves || answer.needsReview || inSample(spectrumId);
       const result = { answer, curves: keep ? packCurves(curves) : null };
       onStage('keep');
       return { ...identity, facts, result };

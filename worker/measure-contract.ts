@@ -22,6 +22,8 @@ export interface ChunkTask {
   readonly inputs: readonly TaskInput[];
   readonly context: ExposureContext;
   readonly measuring: MeasuringOptions;
+  /** Keep the curves of every spectrum, not only of those flagged here and of the sample. */
+  readonly keepAllCurves: boolean;
 }
 
 /** What a thread hands back: one outcome per spectrum asked for, in order. */
