@@ -33,6 +33,12 @@ describe('combineMasks', () => {
     expect(notes).toEqual(['mask bit 2 is set over 80 % of the pixels and was ignored']);
   });
 
+  it('ignores a bit over a fifth of the spectrum: what is broken would have no weight', () => {
+    const { bad, notes } = combineMasks([mask(16, 16, 0, 0, 0, 0, 0, 0, 0, 0)], 'nonzero', WEIGHTY);
+    expect([...bad]).toEqual(new Array(10).fill(0));
+    expect(notes).toEqual(['mask bit 4 is set over 20 % of the pixels and was ignored']);
+  });
+
   it('believes a flag of zeros and ones however much it covers', () => {
     const { bad } = combineMasks([mask(1, 1, 1, 1, 1, 1, 1, 0, 0, 0)], 'nonzero', WEIGHTY);
     expect([...bad]).toEqual([1, 1, 1, 1, 1, 1, 1, 0, 0, 0]);
