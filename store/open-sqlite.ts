@@ -43,6 +43,8 @@ export async function openSqliteStore(path: string, options: SqliteOptions = {})
   }
 }
 
+const NOTHING_CHANGED = { changes: 0, lastInsertRowid: 0 };
+
 type SqlValue = null | number | bigint | string | Uint8Array;
 
 /**
@@ -62,6 +64,9 @@ function asKyselyDatabase(sqlite: DatabaseSyncInstance) {
         reader: statement.columns().length > 0,
         all: (values: readonly unknown[]) => statement.all(...bind(values)) as unknown[],
         run: (values: readonly unknown[]) => {
+          // A full disk undoes the transaction by itself (sqlite.org/lang_transaction.html, 2.3); to undo it
+          // again would be an error that hides the one that matters.
+          if (text === 'rollback' && !sqlite.isTransaction) return NOTHING_CHANGED;
           const { changes, lastInsertRowid } = statement.run(...bind(values));
           return { changes, lastInsertRowid };
         },

@@ -78,7 +78,7 @@ export async function runNight(
     const log = openLog(workspace.logs);
     const store = await openSqliteStore(workspace.store);
     try {
-      const summary = await runOver(store, workspace, request, log);
+      const summary = await runInStore(store, workspace, request, log);
       await finish(store, summary);
       return summary;
     } finally {
@@ -89,7 +89,12 @@ export async function runNight(
   }
 }
 
-async function runOver(
+/**
+ * The same over a store that is open already and whose workspace this process owns.
+ *
+ * @throws PathFault, EnvironmentFault
+ */
+export async function runInStore(
   store: Store,
   workspace: Workspace,
   request: RunRequest,

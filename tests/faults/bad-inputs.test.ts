@@ -11,7 +11,7 @@ import {
   THROWS,
 } from '../worker/practice-folder.ts';
 import { freshWorkspace } from '../worker/fresh-workspace.ts';
-import { practiceRun, rowsOf } from '../worker/practice-run.ts';
+import { PRACTICE_POOL, practiceRun, rowsOf } from '../worker/practice-run.ts';
 
 it('a truncated file, an empty one and a broken gzip each end as a row that says why, and cost no other row', async () => {
   const folder = practiceFolder();
@@ -94,10 +94,7 @@ it('a spectrum that never ends, one that ends its thread and one that meets a bu
   const workspace = await freshWorkspace();
   const summary = await practiceRun(folder, workspace, {
     chunkSize: 12,
-    pool: {
-      ...{ threads: 2, loadLimitMs: 60_000, spectrumLimitMs: 3_000, threadMegabytes: 512 },
-      taskFile: new URL('../worker/stand-in-task.ts', import.meta.url),
-    },
+    pool: { ...PRACTICE_POOL, spectrumLimitMs: 3_000 },
   });
   expect(summary.missing).toBe(0);
   const reasons = (await rowsOf(workspace))

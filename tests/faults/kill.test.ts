@@ -1,34 +1,77 @@
+import { DatabaseSync } from '@photostructure/sqlite';
 import { spawn } from 'node:child_process';
+import { existsSync } from 'node:fs';
 import { resolve } from 'node:path';
 import { setTimeout as sleep } from 'node:timers/promises';
 import { expect, it } from 'vitest';
 import { seededRandom } from '../../pipeline/core/random.ts';
+import { workspaceAt } from '../../worker/workspace.ts';
 import { freshWorkspace } from '../worker/fresh-workspace.ts';
 import { practiceFolder } from '../worker/practice-folder.ts';
 import { practiceRun, rowsOf } from '../worker/practice-run.ts';
 
 const PROGRAM = resolve(import.meta.dirname, 'run-practice-night.ts');
-const KILLS = 4;
-/** From before the plan is stored to the last chunks, on a quiet machine. */
-const LATEST_KILL_MS = 6_000;
+const SEED = Number(process.env['SHIFTWORK_TEST_SEED'] ?? 20_310_403);
+/** Each kill comes somewhere in one of these spans of rows, so that every run of three gets further. */
+const KILLED_WITHIN = [
+  [1, 6],
+  [7, 12],
+  [13, 18],
+] as const;
+const POLL_MS = 2;
 
-/** Starts the run in a process of its own; kills it after `killAfterMs` unless it ends before. */
-function startRun(folder: string, workspace: string, killAfterMs: number | null): Promise<number | null> {
+/** A run in a process of its own, with one thread and a chunk per spectrum: rows appear one by one. */
+function startRun(folder: string, workspace: string) {
   const run = spawn(process.execPath, ['--import', 'tsx', PROGRAM, folder, workspace], { stdio: 'ignore' });
-  const ended = new Promise<number | null>((done) => run.on('exit', done));
-  if (killAfterMs === null) return ended;
-  return Promise.race([ended, sleep(killAfterMs).then(() => run.kill('SIGKILL'))]).then(() => ended);
+  const ended = new Promise<number | NodeJS.Signals | null>((done) =>
+    run.on('exit', (code, signal) => {
+      done(signal ?? code);
+    }),
+  );
+  return { run, ended };
 }
 
-it('a run killed at any moment and started again ends with the rows of an undisturbed one', {
-  timeout: 300_000,
+/** Kills the run as soon as `rows` rows are in its store. Returns how the process ended. */
+async function runKilledAt(folder: string, workspace: string, rows: number) {
+  const { run, ended } = startRun(folder, workspace);
+  while (run.exitCode === null && rowsInStore(workspace) < rows) await sleep(POLL_MS);
+  run.kill('SIGKILL');
+  return ended;
+}
+
+/** Looks past the program, straight into the file; 0 while the file or its tables are not there. */
+function rowsInStore(workspace: string): number {
+  const path = workspaceAt(workspace).store;
+  if (!existsSync(path)) return 0;
+  try {
+    const file = new DatabaseSync(path, { readOnly: true, timeout: 1_000 });
+    try {
+      return Number(file.prepare('select count(*) as rows from measurements').get()?.['rows'] ?? 0);
+    } finally {
+      file.close();
+    }
+  } catch {
+    return 0;
+  }
+}
+
+it('a run killed at any row and started again ends with the catalogue of an undisturbed one', {
+  timeout: 180_000,
 }, async () => {
+  const random = seededRandom(SEED);
+  const kills = KILLED_WITHIN.map(
+    ([from, to]) => from + Math.min(to - from, Math.floor(random.uniform() * (to - from + 1))),
+  );
+  console.log(`seed ${SEED} (SHIFTWORK_TEST_SEED): killed once there are ${kills.join(', ')} rows`);
   const folder = practiceFolder();
   const undisturbed = await freshWorkspace();
-  await practiceRun(folder, undisturbed, { chunkSize: 3 });
+  await practiceRun(folder, undisturbed);
   const killed = await freshWorkspace();
-  const random = seededRandom(20310403);
-  for (let kill = 0; kill < KILLS; kill++) await startRun(folder, killed, random.uniform() * LATEST_KILL_MS);
-  expect(await startRun(folder, killed, null)).toBe(0);
+  for (const rows of kills) {
+    expect(await runKilledAt(folder, killed, rows)).toBe('SIGKILL');
+    expect(rowsInStore(killed)).toBeGreaterThanOrEqual(rows);
+    expect(rowsInStore(killed)).toBeLessThan(25);
+  }
+  expect(await startRun(folder, killed).ended).toBe(0);
   expect(await rowsOf(killed)).toEqual(await rowsOf(undisturbed));
 });
