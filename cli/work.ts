@@ -1,5 +1,6 @@
 import type { Command } from 'commander';
 import { type CommonFlags, readConfiguration, withCommonFlags } from './configuration.ts';
+import { EXIT } from './exit-status.ts';
 import { stopSignal } from './stop-signal.ts';
 
 interface WorkFlags extends CommonFlags {
@@ -37,6 +38,13 @@ export function registerWork(program: Command): void {
           pool: poolOptions(operating),
           untilEmpty: flags.untilEmpty === true,
           signal: stop.signal,
+          onForeignRecipe: (night, missing) => {
+            process.stderr.write(
+              `night ${night} is left alone with ${missing} spectra to measure: it was queued by another ` +
+                'version or with other family files; `shiftwork enqueue` or `shiftwork run` plans it anew\n',
+            );
+            if (flags.untilEmpty === true) process.exitCode = EXIT.missing;
+          },
         });
         process.stdout.write(`${rows} spectra measured by this worker\n`);
       } finally {

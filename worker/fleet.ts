@@ -81,6 +81,11 @@ export async function workUntilStopped(request: {
   readonly pool: PoolOptions;
   readonly untilEmpty: boolean;
   readonly signal: AbortSignal;
+  /**
+   * Told once for each night with work left that this worker must not touch: it was queued under another
+   * recipe (version, family files), so only planning it anew can say what is wanted.
+   */
+  readonly onForeignRecipe: (night: string, missing: number) => void;
 }): Promise<number> {
   const workspace = makeWorkspace(request.workspace);
   const release = request.redisUrl === null ? ownQueue(workspace.queue) : () => undefined;
@@ -94,6 +99,13 @@ export async function workUntilStopped(request: {
   const stop = new AbortController();
   const machineFaults: EnvironmentFault[] = [];
   let rows = 0;
+  const foreign = new Set<string>();
+  const onForeignRecipe = (night: string, missing: number) => {
+    if (foreign.has(night)) return;
+    foreign.add(night);
+    log.warn({ night, missing }, 'the night was queued under another recipe and is left alone');
+    request.onForeignRecipe(night, missing);
+  };
   const context = {
     ...{ store, queue, pool, log, verifier: createInputVerifier(), chunkSize: request.chunkSize },
     onRows: (more: number) => {
@@ -112,7 +124,7 @@ export async function workUntilStopped(request: {
     while (!signal.aborted) {
       const counts = await queue.counts();
       if (counts.waiting + counts.running === 0) {
-        const busy = await lookAfterNights(context);
+        const busy = await lookAfterNights(context, onForeignRecipe);
         if (!busy && request.untilEmpty) break;
       }
       await sleep(LOOK_MS, undefined, { signal }).catch(() => undefined);
@@ -129,15 +141,21 @@ export async function workUntilStopped(request: {
 }
 
 /** Queues what unfinished nights miss. Returns whether there was any. */
-async function lookAfterNights(context: Parameters<typeof queueWhatIsMissing>[0]): Promise<boolean> {
+async function lookAfterNights(
+  context: Parameters<typeof queueWhatIsMissing>[0],
+  onForeignRecipe: (night: string, missing: number) => void,
+): Promise<boolean> {
   const { store } = context;
   let busy = false;
   for (const night of await store.nights()) {
     const run = (await store.runs(night.name)).find(({ runId }) => runId === night.currentRun);
     if (run === undefined) continue;
     const recipeHash = recipeHashOf(settingsOf(night));
-    // Queued with other families or another version: only a new run can say what is wanted now.
-    if (recipeHash !== run.recipeHash) continue;
+    if (recipeHash !== run.recipeHash) {
+      const left = (await store.pending(night.name, run.recipeHash)).length;
+      if (left > 0 || run.finishedAt === null) onForeignRecipe(night.name, left);
+      continue;
+    }
     const missing = (await store.pending(night.name, recipeHash)).length;
     if (missing === 0 && run.finishedAt !== null) continue;
     busy = true;
