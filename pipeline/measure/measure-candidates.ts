@@ -1,6 +1,6 @@
 import type { Family, Kind } from '../../templates/family.ts';
 import type { Measurement, MeasuredSpectrum } from './measurement.ts';
-import { refine } from './refine.ts';
+import { type RedshiftRange, refine } from './refine.ts';
 import { type Refit, Refitter, ROUNDS_TO_RANK } from './refit.ts';
 import type { RefitPixels } from './refit-pixels.ts';
 
@@ -55,7 +55,8 @@ export function measureCandidates(
   }
   const byMerit = [...measurements].sort((a, b) => merit(a, inflation) - merit(b, inflation));
   for (const one of distinctLeaders(byMerit, economy.refined)) {
-    const { refit, sigmaKmS, atEdge } = refine(refitter, one.family, one.refit);
+    const range = rangeOfSet(proposals, one.family.refitSet);
+    const { refit, sigmaKmS, atEdge } = refine(refitter, one.family, one.refit, range);
     measurements.push({ ...one, redshift: refit.redshift, refit, sigmaKmS, atEdge, refined: true });
   }
   const empty = refitter.polynomial(EMPTY_ORDER);
@@ -77,6 +78,15 @@ function unrefined(family: Family, refit: Refit): Measurement {
 
 function merit(one: Measurement, inflation: number): number {
   return one.refit.chiSquare / inflation + one.refit.price;
+}
+
+/** Windows of one set lie side by side: the end of a window is no end of the search. */
+function rangeOfSet(proposals: readonly Proposal[], refitSet: string): RedshiftRange {
+  const families = proposals.map(({ family }) => family).filter((family) => family.refitSet === refitSet);
+  return {
+    redshiftMin: Math.min(...families.map(({ redshiftMin }) => redshiftMin)),
+    redshiftMax: Math.max(...families.map(({ redshiftMax }) => redshiftMax)),
+  };
 }
 
 /** The best proposals of each kind, one per valley and refit set. */

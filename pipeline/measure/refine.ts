@@ -8,12 +8,18 @@ const FIRST_STEP_KM_S: Readonly<Record<Kind, number>> = { star: 30, galaxy: 40, 
 /** A walk longer than this has left the valley the search found. */
 const LONGEST_WALK = 6;
 
+/** Where a search looked; a family's own range, or that of all families that share its components. */
+export interface RedshiftRange {
+  readonly redshiftMin: number;
+  readonly redshiftMax: number;
+}
+
 /** Best redshift of one valley. */
 export interface Refined {
   readonly refit: Refit;
   /** Formal 1-sigma from the curvature, km/s in c·Δz/(1+z); null when the valley has no curvature. */
   readonly sigmaKmS: number | null;
-  /** True when the walk ended at its limit or at the edge of the family's range. */
+  /** True when the bottom lies at or beyond the edge of the range: the true one may be further on. */
   readonly atEdge: boolean;
 }
 
@@ -25,16 +31,27 @@ export interface Refined {
  * Along a walk only the components active at its start take part: a step is a tenth of the cost, and chi-square
  * stays a smooth function of redshift. All components are offered again where a walk ends.
  */
-export function refine(refitter: Refitter, family: Family, start: Refit): Refined {
-  const coarse = walk(refitter, family, start, FIRST_STEP_KM_S[family.kind]);
+export function refine(
+  refitter: Refitter,
+  family: Family,
+  start: Refit,
+  range: RedshiftRange = family,
+): Refined {
+  const coarse = walk(refitter, family, start, FIRST_STEP_KM_S[family.kind], range);
   if (coarse.sigmaKmS === null) return coarse;
   const step = Math.min(Math.max(coarse.sigmaKmS, 1), FIRST_STEP_KM_S[family.kind]);
-  const fine = walk(refitter, family, coarse.refit, step);
+  const fine = walk(refitter, family, coarse.refit, step, range);
   return { ...fine, sigmaKmS: fine.sigmaKmS ?? coarse.sigmaKmS, atEdge: coarse.atEdge || fine.atEdge };
 }
 
-function walk(refitter: Refitter, family: Family, start: Refit, stepKmS: number): Refined {
-  const found = walkWith(refitter, onlyActive(family, start), start, stepKmS);
+function walk(
+  refitter: Refitter,
+  family: Family,
+  start: Refit,
+  stepKmS: number,
+  range: RedshiftRange,
+): Refined {
+  const found = walkWith(refitter, onlyActive(family, start), start, stepKmS, range);
   return { ...found, refit: refitter.at(family, found.refit.redshift, start.activeIndices) };
 }
 
@@ -49,7 +66,13 @@ function onlyActive(family: Family, { activeIndices }: Refit): Family {
   };
 }
 
-function walkWith(refitter: Refitter, family: Family, start: Refit, stepKmS: number): Refined {
+function walkWith(
+  refitter: Refitter,
+  family: Family,
+  start: Refit,
+  stepKmS: number,
+  range: RedshiftRange,
+): Refined {
   const h = stepKmS / SPEED_OF_LIGHT_KM_S;
   const at = (from: Refit, steps: number): Refit =>
     refitter.at(family, Math.expm1(Math.log1p(from.redshift) + steps * h), everyIndex);
@@ -63,8 +86,7 @@ function walkWith(refitter: Refitter, family: Family, start: Refit, stepKmS: num
     else [left, middle, right] = [middle, right, at(right, 1)];
     walked++;
   }
-  const outside = middle.redshift <= family.redshiftMin || middle.redshift >= family.redshiftMax;
-  const atEdge = walked >= LONGEST_WALK || outside;
+  const atEdge = middle.redshift <= range.redshiftMin || middle.redshift >= range.redshiftMax;
   const curvature = cost(left) - 2 * cost(middle) + cost(right);
   if (!(curvature > 0)) return { refit: middle, sigmaKmS: null, atEdge };
   const vertex = (0.5 * (cost(left) - cost(right))) / curvature;

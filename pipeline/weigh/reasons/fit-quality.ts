@@ -38,12 +38,12 @@ export function unusual(one: Case): Reason | null {
 
 /** The search ended before the fit did. */
 export function rangeEdge(one: Case): Reason | null {
-  const { atEdge, redshift, family } = one.best.best;
+  const { atEdge, kind, redshift } = one.best.best;
   if (!atEdge) return null;
   return {
     word: 'range-edge',
     weight: 'look',
-    sentence: `The fit still fell at ${redshift.toFixed(5)} when the search ended (${family.redshiftMin} to ${family.redshiftMax}).`,
-    numbers: { redshift, redshiftMin: family.redshiftMin, redshiftMax: family.redshiftMax },
+    sentence: `The best fit, at ${redshift.toFixed(5)}, lies at the edge of the redshifts searched for a ${kind}.`,
+    numbers: { redshift },
   };
 }

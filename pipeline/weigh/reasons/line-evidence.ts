@@ -18,6 +18,8 @@ const FIXED_RATIOS = [
   ['[O III] 5008', '[O III] 4960', 2.98],
   ['[N II] 6585', '[N II] 6550', 3.05],
 ] as const;
+/** Lines are measured with one fixed width, blends with it: only a ratio off by a factor of two says something. */
+const IMPOSSIBLE_FACTOR = 2;
 /** Ratio defects below this many sigma are noise. */
 const IMPOSSIBLE_SIGMA = 5;
 /** The features that settle a galaxy between 3,600 and 9,500 Å. */
@@ -73,8 +75,9 @@ export function impossibleLines(one: Case): Reason | null {
     const b = lineNamed(one, weak);
     if (!a || !b) continue;
     // Only the weak line too strong is impossible; a strong line may hide in noise or sky.
-    const excess = b.flux - a.flux / ratio;
-    const sigma = Math.hypot(b.fluxError, a.fluxError / ratio);
+    const most = (IMPOSSIBLE_FACTOR * a.flux) / ratio;
+    const excess = b.flux - most;
+    const sigma = Math.hypot(b.fluxError, (IMPOSSIBLE_FACTOR * a.fluxError) / ratio);
     if (b.signalToNoise < LINE_SEEN_SIGMA || excess < IMPOSSIBLE_SIGMA * sigma) continue;
     return {
       word: 'impossible-lines',

@@ -112,5 +112,7 @@ describe('refine()', () => {
     const refitter = new Refitter(pixels);
     const found = refine(refitter, narrow, refitter.at(narrow, 0.0094));
     expect(found.atEdge).toBe(true);
+    // The same bottom inside the wider range of a set of windows is no edge.
+    expect(refine(refitter, narrow, refitter.at(narrow, 0.0094), FAMILY).atEdge).toBe(false);
   });
 });

@@ -72,7 +72,7 @@ const PAIRS: readonly [ReasonWord, Case, number, Case, number][] = [
     'impossible-lines',
     aCase({ lines: [someLine('[O III] 5008', 10, 6511, 10), someLine('[O III] 4960', 30, 6448, 30)] }),
     SURE,
-    aCase({ lines: [someLine('[O III] 5008', 30, 6511, 30), someLine('[O III] 4960', 10, 6448, 10)] }),
+    aCase({ lines: [someLine('[O III] 5008', 300, 6511, 300), someLine('[O III] 4960', 120, 6448, 120)] }),
     SURE,
   ],
   [
