@@ -47,12 +47,3 @@ it('runNight() measures everything again when asked, and gets the same rows', as
   expect(again.measured).toBe(25);
   expect(await rowsOf(workspace)).toEqual(before);
 });
-
-it.each([1, 240])(
-  'runNight() gives the same rows with chunks of %i as with chunks of 7',
-  async (chunkSize) => {
-    const other = await freshWorkspace();
-    await practiceRun(folder, other, { chunkSize });
-    expect(await rowsOf(other)).toEqual(await rowsOf(workspace));
-  },
-);
