@@ -11,7 +11,7 @@ import { SPEED_OF_LIGHT_KM_S } from './light.ts';
 import { readArray } from './read-array.ts';
 import type { Arm } from './spectrum.ts';
 import { airToVacuum } from './wavelength/air-vacuum.ts';
-import { spectralAxisFromHeader } from './wavelength/spectral-axis.ts';
+import { spectralAxisOf } from './wavelength/spectral-axis-of.ts';
 import { isMonotonic, toAngstrom } from './wavelength/wavelength-numbers.ts';
 
 /** An arm and what was noticed while reading it. */
@@ -108,7 +108,7 @@ function wavelengthOf(
     });
   }
   for (const header of headersFor(file, armLayout.flux.hdu)) {
-    const axis = spectralAxisFromHeader(header, 1, pixels, place);
+    const axis = spectralAxisOf(file, header, 1, pixels, place);
     if (axis !== null) return axis.wavelengthAngstrom;
   }
   throw new InputFault('wavelength-missing', place, 'a spectral axis must be in the header, got none');

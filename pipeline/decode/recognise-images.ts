@@ -11,7 +11,7 @@ import { lineSpreadMeaningOf } from './line-spread-meaning.ts';
 import { chooseMedium } from './choose-medium.ts';
 import { imageArray } from './recognition.ts';
 import type { Recognition } from './recognition.ts';
-import { spectralAxisFromHeader } from './wavelength/spectral-axis.ts';
+import { spectralAxisOf } from './wavelength/spectral-axis-of.ts';
 import { wavelengthUnitOfArray } from './wavelength/wavelength-unit-of-array.ts';
 
 interface NamedImage {
@@ -180,7 +180,7 @@ function wavelengthUnitOfImage(image: ImageHdu, file: string) {
 function axisOf(file: FitsFile, image: ImageHdu) {
   for (const header of headersFor(file, image.index)) {
     const place = { file: file.label, hdu: image.index };
-    const axis = spectralAxisFromHeader(header, 1, image.axes[0]!, place);
+    const axis = spectralAxisOf(file, header, 1, image.axes[0]!, place);
     if (axis !== null) return axis;
   }
   return null;
