@@ -1,5 +1,5 @@
 import type { RefitPixels } from './refit-pixels.ts';
-import { solvePositiveDefinite } from './nnls.ts';
+import { solvePositiveDefinite } from '../core/solve-positive-definite.ts';
 
 /** Span in ln(wavelength) of a spectrum from 3,600 to 9,300 Å: the range the polynomial orders were measured on. */
 const FULL_SPAN = 0.95;

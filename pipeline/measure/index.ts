@@ -5,7 +5,6 @@ export type { LineMeasurement } from './line-measurement.ts';
 export { measureLines } from './lines.ts';
 export { DEFAULT_ECONOMY, type Economy, measureCandidates, type Proposal } from './measure-candidates.ts';
 export type { MeasuredSpectrum, Measurement } from './measurement.ts';
-export { solvePositiveDefinite } from './nnls.ts';
 export type { Refit } from './refit.ts';
 export { type NativeArm, type RefitPixels, refitPixels } from './refit-pixels.ts';
 export { REST_LINES, type RestLine } from './rest-lines.ts';

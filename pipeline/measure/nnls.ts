@@ -1,3 +1,4 @@
+import { solvePositiveDefinite } from '../core/solve-positive-definite.ts';
 import type { Columns } from './columns.ts';
 
 /** A non-negative least-squares solution. */
@@ -205,33 +206,4 @@ class ActiveSet {
     for (let i = first[j]!; i < end[j]!; i++) sum += this.#weight[i]! * values[base + i]! * this.#data[i]!;
     return sum;
   }
-}
-
-/** Cholesky solve of a small symmetric positive definite system; a pivot lost to rounding is lifted. */
-export function solvePositiveDefinite(
-  matrix: readonly (readonly number[])[],
-  right: readonly number[],
-): number[] {
-  const m = right.length;
-  const lower: number[][] = [];
-  for (let i = 0; i < m; i++) {
-    const row: number[] = [];
-    for (let j = 0; j <= i; j++) {
-      let sum = matrix[i]![j]!;
-      for (let k = 0; k < j; k++) sum -= (i === j ? row[k]! : lower[j]![k]!) * row[k]!;
-      if (i === j) row.push(Math.sqrt(Math.max(sum, 1e-12 * matrix[i]![i]!)));
-      else row.push(sum / lower[j]![j]!);
-    }
-    lower.push(row);
-  }
-  const x = [...right];
-  for (let i = 0; i < m; i++) {
-    for (let k = 0; k < i; k++) x[i]! -= lower[i]![k]! * x[k]!;
-    x[i]! /= lower[i]![i]!;
-  }
-  for (let i = m - 1; i >= 0; i--) {
-    for (let k = i + 1; k < m; k++) x[i]! -= lower[k]![i]! * x[k]!;
-    x[i]! /= lower[i]![i]!;
-  }
-  return x;
 }

@@ -1,4 +1,4 @@
-import { solvePositiveDefinite } from '../measure/index.ts';
+import { solvePositiveDefinite } from '../core/solve-positive-definite.ts';
 
 /** One example: what was known, and how right it was (0 … 1). */
 export interface LogisticExample {

@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import type { Columns } from '../../../pipeline/measure/columns.ts';
-import { solveNonNegative, solvePositiveDefinite } from '../../../pipeline/measure/nnls.ts';
+import { solvePositiveDefinite } from '../../../pipeline/core/solve-positive-definite.ts';
+import { solveNonNegative } from '../../../pipeline/measure/nnls.ts';
 
 /** Small linear congruential generator (Numerical Recipes constants), so that failures can be repeated. */
 function generator(seed: number): () => number {
