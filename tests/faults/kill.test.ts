@@ -46,7 +46,10 @@ function rowsInStore(workspace: string): number {
   try {
     const file = new DatabaseSync(path, { readOnly: true, timeout: 1_000 });
     try {
-      return Number(file.prepare('select count(*) as rows from measurements').get()?.['rows'] ?? 0);
+      const counted = file.prepare('select count(*) as written from measurements').get() as {
+        written: number;
+      };
+      return counted.written;
     } finally {
       file.close();
     }
