@@ -59,7 +59,7 @@ function rowsInStore(workspace: string): number {
 }
 
 it('a run killed at any row and started again ends with the catalogue of an undisturbed one', {
-  timeout: 180_000,
+  timeout: 300_000,
 }, async () => {
   const random = seededRandom(SEED);
   const kills = KILLED_WITHIN.map(
