@@ -22,7 +22,7 @@ const PLANTS = {
   chance: { file: 'pipeline/chance.ts', content: 'export const chance = (): number => Math.random();\n' },
   excuse: {
     file: 'store/excuse.ts',
-    content: `/* ${'eslint'}-disable no-restricted-globals */\nexport const excused = 1;\n`,
+    content: `${['/* eslint', 'disable no-restricted-globals */'].join('-')}\nexport const excused = 1;\n`,
   },
   longSource: { file: 'store/long.ts', content: lines(401) },
   longTool: { file: 'tools/long.mjs', content: lines(401) },
