@@ -4,6 +4,7 @@ import { refine } from '../../../pipeline/measure/refine.ts';
 import { Refitter } from '../../../pipeline/measure/refit.ts';
 import { type RefitPixels, refitPixels } from '../../../pipeline/measure/refit-pixels.ts';
 import { renderColumns } from '../../../pipeline/measure/columns.ts';
+import { shiftBound } from '../../reference/shift-bound.ts';
 import type { Component, Family } from '../../../templates/family.ts';
 
 const C = 299_792.458;
@@ -71,9 +72,8 @@ function boundKmS(redshift: number, signalToNoise: number): number {
   const h = 1 / C;
   const up = renderColumns([COMPONENT], GRID, redshift + h, pixels).values;
   const down = renderColumns([COMPONENT], GRID, redshift - h, pixels).values;
-  let information = 0;
-  for (let i = 0; i < pixels.count; i++) information += ((up[i]! - down[i]!) / 2) ** 2;
-  return 1 / (signalToNoise * Math.sqrt(information));
+  const derivative = Float64Array.from(up, (v, i) => (v - down[i]!) / 2);
+  return shiftBound(derivative, () => 1 / signalToNoise);
 }
 
 describe('refine()', () => {
