@@ -14,6 +14,7 @@ import { InputFault } from '../../pipeline/errors.ts';
 import { NO_EXPOSURE_CONTEXT } from '../../pipeline/grid/index.ts';
 import { type Answer, measureSpectrum } from '../../pipeline/index.ts';
 import { type FamilyLibrary, loadFamilyLibrary } from '../../templates/library.ts';
+import { spectrumOf } from '../reference/synthetic-spectra.ts';
 import { printSkipReason, sharedPath } from '../support/shared-data.ts';
 
 const SPEED_OF_LIGHT_KM_S = 299_792.458;
@@ -119,35 +120,11 @@ describe('measureSpectrum()', () => {
   const wavelength = Float64Array.from({ length: 4000 }, (_, i) => 3700 + 1.4 * i);
 
   function flatSpectrum(flux: Float64Array): Spectrum {
+    const inverseVariance = new Float64Array(flux.length).fill(1);
     return {
-      inputHdu: 1,
+      ...spectrumOf([{ wavelengthVacuumAngstrom: wavelength, flux, inverseVariance }]),
       inputRow: 7,
-      arms: [
-        {
-          name: '',
-          wavelengthVacuumAngstrom: wavelength,
-          flux,
-          inverseVariance: new Float64Array(flux.length).fill(1),
-          noiseSource: 'stated',
-        },
-      ],
       frame: 'barycentric',
-      appliedCorrectionKmS: null,
-      observedAt: null,
-      exposureS: null,
-      coaddedOverNights: false,
-      site: null,
-      raDeg: null,
-      decDeg: null,
-      targetName: null,
-      field: null,
-      exposureId: null,
-      fibre: null,
-      role: 'target',
-      targetClass: null,
-      magnitude: null,
-      magnitudeBand: null,
-      notes: [],
     };
   }
 

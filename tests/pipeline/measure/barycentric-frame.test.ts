@@ -1,28 +1,14 @@
 import { describe, expect, it } from 'vitest';
 import type { Spectrum } from '../../../pipeline/decode/index.ts';
 import { barycentricFrame } from '../../../pipeline/measure/barycentric-frame.ts';
+import { spectrumOf } from '../../reference/synthetic-spectra.ts';
 
 const SPECTRUM: Spectrum = {
-  inputHdu: 0,
-  inputRow: null,
-  arms: [],
-  frame: 'topocentric',
-  appliedCorrectionKmS: null,
+  ...spectrumOf([]),
   observedAt: '2012-09-20T10:00:00',
-  exposureS: 1800,
-  coaddedOverNights: false,
   site: { latitudeDeg: 19.8263, longitudeEastDeg: -155.4747, heightM: 4145 },
   raDeg: 10.6847,
   decDeg: 41.269,
-  targetName: null,
-  field: null,
-  exposureId: null,
-  fibre: null,
-  role: 'target',
-  targetClass: null,
-  magnitude: null,
-  magnitudeBand: null,
-  notes: [],
 };
 
 describe('barycentricFrame()', () => {
